@@ -1,0 +1,3 @@
+//! Finds everything that a halogenated compound can turn into under reducing conditions.
+
+pub mod molecule;

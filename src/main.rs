@@ -1,0 +1,2 @@
+//! The command line; see `src/commands`.
+fn main() {}

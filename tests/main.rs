@@ -1,0 +1,1 @@
+//! Tests of behaviour, one module a capability.
