@@ -1,1 +1,3 @@
 //! Tests of behaviour, one module a capability.
+
+mod frame;
