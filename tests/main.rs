@@ -1,3 +1,5 @@
 //! Tests of behaviour, one module a capability.
 
+#![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
+
 mod frame;
