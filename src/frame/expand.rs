@@ -78,10 +78,7 @@ impl Workspace {
 
 impl Prepared {
     /// Makes a frame ready for the cases laid on it.
-    pub fn new(frame: Frame, layout: Layout, mut places: Vec<Place>) -> Prepared {
-        for place in &mut places {
-            place.find_open_units(&frame);
-        }
+    pub fn new(frame: Frame, layout: Layout, places: Vec<Place>) -> Prepared {
         let canonicaliser = Canonicaliser::new(&frame, &layout);
         let limits = RingLimits::of(&frame);
         Prepared { frame, layout, canonicaliser, limits, places }
@@ -103,28 +100,19 @@ impl Prepared {
         work.row.copy_from_slice(row);
         self.layout.candidates(&self.frame, &work.parent, &mut work.candidates);
         let is_transient = work.parent.is_transient();
-        let mut holds_halogen = None;
         for place in &self.places {
             if !place.fits(&self.frame, &work.parent, is_transient) {
-                continue;
-            }
-            if place.molecule.no_halogen && *holds_halogen.get_or_insert_with(|| self.holds_halogen(&work.parent)) {
                 continue;
             }
             self.act(place, work, emit);
         }
     }
 
-    fn holds_halogen(&self, state: &Decoration) -> bool {
-        let fixed = self.frame.skeleton().halogens().iter().any(|&n| n > 0);
-        fixed || (0..state.halogens.len()).any(|site| state.n_halogens(site) > 0)
-    }
-
     fn act(&self, place: &Place, work: &mut Workspace, emit: &mut impl FnMut(Product<'_>)) {
         work.child.clone_from(&work.parent);
         place.edit_bonds_and_lone_pairs(&mut work.child);
         let raised = place.bonds.iter().filter(|b| b.change > 0);
-        if place.ring_limits && !raised.into_iter().all(|b| self.limits.allow(&work.child, b.bond)) {
+        if place.has_ring_limits && !raised.into_iter().all(|b| self.limits.allow(&work.child, b.bond)) {
             return;
         }
         let is_newly_aromatic =
@@ -146,46 +134,27 @@ impl Prepared {
             self.finish(place, n_matches, is_newly_aromatic, work, emit);
             return;
         };
+        let ways = n_matches * self.hydrogen_choices(place, next, work);
         let site = demand.site;
         let here = work.child.halogens[site];
-        let n = here.map(u32::from);
-        match demand.n_cut {
-            0 => self.cut(
-                place,
-                next + 1,
-                n_matches * self.hydrogen_choices(place, next, work),
-                is_newly_aromatic,
-                work,
-                emit,
-            ),
-            1 => {
-                for x in (0..4).filter(|&x| n[x] > 0) {
-                    work.child.halogens[site][x] -= 1;
-                    let ways = n_matches * n[x] * self.hydrogen_choices(place, next, work);
-                    self.cut(place, next + 1, ways, is_newly_aromatic, work, emit);
-                    work.child.halogens[site] = here;
-                }
+        for cut in &demand.selections {
+            if (0..4).any(|x| cut[x] > here[x]) {
+                continue;
             }
-            _ => {
-                for x in 0..4 {
-                    for y in x..4 {
-                        let ways = if x == y { n[x] * n[x].saturating_sub(1) / 2 } else { n[x] * n[y] };
-                        if ways > 0 {
-                            work.child.halogens[site][x] -= 1;
-                            work.child.halogens[site][y] -= 1;
-                            self.cut(place, next + 1, n_matches * ways, is_newly_aromatic, work, emit);
-                            work.child.halogens[site] = here;
-                        }
-                    }
-                }
+            let picks: u32 = (0..4).map(|x| choose(u32::from(here[x]), u32::from(cut[x]))).product();
+            for x in 0..4 {
+                work.child.halogens[site][x] = here[x] - cut[x];
             }
+            self.cut(place, next + 1, ways * picks, is_newly_aromatic, work, emit);
         }
+        work.child.halogens[site] = here;
     }
 
-    /// Ways to choose the hydrogen that a demand takes away: each C–H bond is one.
+    /// Ways to choose the hydrogens that a demand takes away: each C–H bond is one.
     fn hydrogen_choices(&self, place: &Place, demand: usize, work: &Workspace) -> u32 {
         let s = &place.sites[demand];
-        if s.least_hydrogens == 1 { u32::from(work.parent.n_hydrogens(&self.frame, s.site)) } else { 1 }
+        let n = if s.n_hydrogens_taken == 0 { 0 } else { work.parent.n_hydrogens(&self.frame, s.site) };
+        choose(u32::from(n), u32::from(s.n_hydrogens_taken))
     }
 
     /// Packs the child, settles its configuration in every way, and emits the distinct products.
@@ -263,6 +232,11 @@ impl Prepared {
             }
         }
     }
+}
+
+/// Number of ways to choose `k` of `n` (at most four of four here).
+fn choose(n: u32, k: u32) -> u32 {
+    (0..k).fold(1, |product, i| product * (n - i) / (i + 1))
 }
 
 fn open_unit(field: super::packing::Field, is_open: bool, work: &mut Workspace) {

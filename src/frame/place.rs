@@ -6,22 +6,8 @@
 
 use super::decoration::Decoration;
 use super::skeleton::Frame;
-use crate::molecule::BondOrder;
-
-/// What a pattern carbon must be.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum Kind {
-    /// A carbon site: neither aromatic nor a carbene.
-    Site,
-    /// A carbon site without multiple bonds.
-    Saturated,
-    /// A carbon site with just one double bond to carbon.
-    Vinyl,
-    /// An aromatic carbon.
-    Aryl,
-    /// A carbene.
-    Carbene,
-}
+use crate::molecule::{BondOrder, Element, Halogen};
+use crate::rules::rule::{AtomKind, CountCondition, Counted, SiteState};
 
 /// What becomes of a pattern carbon's lone pair.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -38,15 +24,17 @@ pub struct SiteDemand {
     /// The site.
     pub site: usize,
     /// What it must be.
-    pub kind: Kind,
+    pub kind: AtomKind,
+    /// How many ligands of a kind it must have.
+    pub conditions: Vec<CountCondition>,
     /// Halogens cut from it.
     pub n_cut: u8,
-    /// Fewest hydrogens it must have.
-    pub least_hydrogens: u8,
+    /// The ways to cut them, as numbers by [`Halogen`].
+    pub selections: Vec<[u8; 4]>,
+    /// Hydrogens taken from it: so many C–H bonds are cut.
+    pub n_hydrogens_taken: u8,
     /// What becomes of its lone pair.
     pub lone_pair: LonePair,
-    /// Whether its bonds, hydrogens or lone pair change, so that configuration there is lost.
-    pub is_touched: bool,
 }
 
 /// A pattern bond on an open bond.
@@ -60,15 +48,6 @@ pub struct BondDemand {
     pub change: i8,
 }
 
-/// Conditions on the whole molecule.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Eq)]
-pub struct MoleculeDemand {
-    /// The molecule must hold no halogen at all.
-    pub no_halogen: bool,
-    /// The case names a carbene, so it may act on a molecule that holds one.
-    pub names_carbene: bool,
-}
-
 /// A case laid on a frame.
 #[derive(Debug, Clone)]
 pub struct Place {
@@ -78,37 +57,25 @@ pub struct Place {
     pub sites: Vec<SiteDemand>,
     /// Pattern bonds.
     pub bonds: Vec<BondDemand>,
-    /// Conditions on the molecule.
-    pub molecule: MoleculeDemand,
+    /// Conditions on the whole molecule.
+    pub conditions: Vec<CountCondition>,
+    /// Whether the case acts on molecules that hold a carbene, and on no others.
+    pub names_carbene: bool,
     /// Whether ring limits are asked of raised bonds.
-    pub ring_limits: bool,
-    /// Centres whose configuration is lost: the touched sites.
+    pub has_ring_limits: bool,
+    /// Sites whose configuration is lost.
     pub open_centres: Vec<usize>,
-    /// Open bonds whose geometry is lost: those at a touched site.
+    /// Open bonds whose geometry is lost: those at a site whose configuration is lost.
     pub open_geometries: Vec<usize>,
 }
 
 impl Place {
-    /// Fills in which configuration is lost.
-    pub fn find_open_units(&mut self, frame: &Frame) {
-        self.open_centres = self.sites.iter().filter(|s| s.is_touched).map(|s| s.site).collect();
-        self.open_geometries = (0..frame.open_bonds().len())
-            .filter(|&bond| {
-                let (a, b) = frame.open_bonds()[bond];
-                self.open_centres.contains(&a) || self.open_centres.contains(&b)
-            })
-            .collect();
-    }
-
-    /// Whether a state meets every demand but those on which halogens are cut.
+    /// Whether a state meets every demand.
     pub fn fits(&self, frame: &Frame, state: &Decoration, is_transient: bool) -> bool {
-        is_transient == self.molecule.names_carbene
+        is_transient == self.names_carbene
             && self.bonds.iter().all(|b| b.allowed[state.orders[b.bond] as usize])
-            && self.sites.iter().all(|s| {
-                state.n_halogens(s.site) >= s.n_cut
-                    && kind_fits(frame, state, s.site, s.kind)
-                    && (s.least_hydrogens == 0 || state.n_hydrogens(frame, s.site) >= s.least_hydrogens)
-            })
+            && self.sites.iter().all(|s| s.fits(frame, state))
+            && self.conditions.iter().all(|c| c.amount.holds(count_in_molecule(frame, state, c.counted)))
     }
 
     /// Makes the edits but the cutting of halogens.
@@ -126,27 +93,73 @@ impl Place {
     }
 }
 
-fn kind_fits(frame: &Frame, state: &Decoration, site: usize, kind: Kind) -> bool {
-    match kind {
-        Kind::Carbene => state.carbenes[site],
-        Kind::Aryl => state.is_aromatic(frame, site),
-        _ if state.carbenes[site] || state.is_aromatic(frame, site) => false,
-        Kind::Site => true,
-        Kind::Saturated => state.n_pi_bonds(frame, site) == 0 && !has_fixed_multiple_bond(frame, site),
-        Kind::Vinyl => state.n_pi_bonds(frame, site) == 1,
+impl SiteDemand {
+    fn fits(&self, frame: &Frame, state: &Decoration) -> bool {
+        state.n_halogens(self.site) >= self.n_cut
+            && is_of_kind(frame, state, self.site, self.kind)
+            && (self.n_hydrogens_taken == 0 || state.n_hydrogens(frame, self.site) >= self.n_hydrogens_taken)
+            && self.conditions.iter().all(|c| c.amount.holds(count_at_site(frame, state, self.site, c.counted)))
     }
 }
 
-/// Whether a site has a double bond to a fixed carbon (as in a ketene).
-fn has_fixed_multiple_bond(frame: &Frame, site: usize) -> bool {
-    usize::from(frame.fixed_valence(site)) > frame.fixed_neighbours(site).count()
+fn is_of_kind(frame: &Frame, state: &Decoration, site: usize, kind: AtomKind) -> bool {
+    match kind {
+        AtomKind::Carbene => state.carbenes[site],
+        AtomKind::Aryl => state.is_aromatic(frame, site),
+        AtomKind::Site(_) if state.carbenes[site] || state.is_aromatic(frame, site) => false,
+        AtomKind::Site(SiteState::Any) => true,
+        AtomKind::Site(wanted) => site_state(frame, state, site) == wanted,
+    }
 }
 
+/// The state of a carbon site, told by its multiple bonds.
+fn site_state(frame: &Frame, state: &Decoration, site: usize) -> SiteState {
+    let has_triple = frame.site_neighbours(site).iter().any(|&(_, bond)| state.orders[bond] == BondOrder::Triple);
+    let fixed_pi = usize::from(frame.fixed_valence(site)).saturating_sub(frame.fixed_neighbours(site).count());
+    match (has_triple, usize::from(state.n_pi_bonds(frame, site)) + fixed_pi) {
+        (true, _) => SiteState::Acetylenic,
+        (false, 0) => SiteState::Saturated,
+        (false, 1) => SiteState::Vinyl,
+        (false, _) => SiteState::Cumulated,
+    }
+}
+
+fn count_at_site(frame: &Frame, state: &Decoration, site: usize, counted: Counted) -> u32 {
+    match counted {
+        Counted::Hydrogens => u32::from(state.n_hydrogens(frame, site)),
+        Counted::Halogens => u32::from(state.n_halogens(site)),
+        Counted::OneHalogen(halogen) => u32::from(state.halogens[site][halogen as usize]),
+        Counted::Carbons => {
+            let skeleton = frame.skeleton();
+            let around = skeleton.neighbours(frame.sites()[site]);
+            around.filter(|&(n, _, _)| skeleton.atom(n).element == Element::C).count() as u32
+        }
+    }
+}
+
+fn count_in_molecule(frame: &Frame, state: &Decoration, counted: Counted) -> u32 {
+    let n_sites = frame.sites().len();
+    let fixed = frame.skeleton();
+    let of = |halogen: Halogen| {
+        let held: u32 = state.halogens.iter().map(|here| u32::from(here[halogen as usize])).sum();
+        held + fixed.halogens()[halogen as usize]
+    };
+    match counted {
+        Counted::Halogens => Halogen::ALL.into_iter().map(of).sum(),
+        Counted::OneHalogen(halogen) => of(halogen),
+        Counted::Carbons => fixed.atoms().filter(|a| a.element == Element::C).count() as u32,
+        Counted::Hydrogens => {
+            let held: u32 = (0..n_sites).map(|site| u32::from(state.n_hydrogens(frame, site))).sum();
+            held + fixed.atoms().map(|a| u32::from(a.n_hydrogens)).sum::<u32>()
+        }
+    }
+}
+
+/// A bond order some steps up or down, between single and triple.
 fn shifted(order: BondOrder, change: i8) -> BondOrder {
-    match (order, change) {
-        (BondOrder::Single, 1) | (BondOrder::Triple, -1) => BondOrder::Double,
-        (BondOrder::Double, 1) | (BondOrder::Single, 2) => BondOrder::Triple,
-        (BondOrder::Double, -1) | (BondOrder::Triple, -2) => BondOrder::Single,
-        _ => order,
+    const LADDER: [BondOrder; 3] = [BondOrder::Single, BondOrder::Double, BondOrder::Triple];
+    match LADDER.iter().position(|&o| o == order) {
+        Some(at) => LADDER[(at as i8 + change).clamp(0, 2) as usize],
+        None => order,
     }
 }
