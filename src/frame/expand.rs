@@ -15,6 +15,7 @@ use super::packing::{Layout, MOST_WORDS};
 use super::place::Place;
 use super::ring_limits::RingLimits;
 use super::skeleton::Frame;
+use crate::molecule::{Halogen, Molecule};
 
 /// Most configuration units that one match may leave open; rules touch few atoms.
 const MOST_OPEN_UNITS: usize = 12;
@@ -92,6 +93,19 @@ impl Prepared {
         self.layout.candidates(&self.frame, decoration, &mut candidates);
         self.canonicaliser.canonical(&row, &candidates, &mut out);
         out
+    }
+
+    /// The canonical state of a molecule; none if it holds a halogen that the layout has no
+    /// room for.
+    ///
+    /// # Panics
+    /// If the molecule has another skeleton.
+    pub fn canonical_row_of(&self, molecule: &Molecule) -> Option<Vec<u64>> {
+        let decoration = self.frame.decompose(molecule);
+        let strange = |&x: &Halogen| {
+            !self.layout.palette().contains(&x) && decoration.halogens.iter().any(|here| here[x as usize] > 0)
+        };
+        (!Halogen::ALL.iter().any(strange)).then(|| self.canonical_row(&decoration))
     }
 
     /// Gives `emit` every product of a state, by place, then choice of halogens.

@@ -61,6 +61,7 @@ impl Field {
 #[derive(Debug, Clone)]
 pub struct Layout {
     identity: Identity,
+    palette: Vec<Halogen>,
     n_words: usize,
     /// By most halogens that fit: what can stand on such a site.
     contents: Vec<Vec<Content>>,
@@ -100,12 +101,18 @@ impl Layout {
         if n_words > MOST_WORDS {
             return Err(TooLarge { n_sites });
         }
-        Ok(Layout { identity, n_words, contents, digits, list_of, sites, orders, trans, clockwise })
+        let palette = palette.to_vec();
+        Ok(Layout { identity, palette, n_words, contents, digits, list_of, sites, orders, trans, clockwise })
     }
 
     /// Words of a state.
     pub fn n_words(&self) -> usize {
         self.n_words
+    }
+
+    /// The halogens that states may hold.
+    pub fn palette(&self) -> &[Halogen] {
+        &self.palette
     }
 
     /// Depth of identity of the states.
@@ -152,6 +159,12 @@ impl Layout {
         for (centre, field) in self.clockwise.iter().enumerate() {
             field.set(row, u64::from(decoration.is_candidate_centre(frame, centre)));
         }
+    }
+
+    /// Whether any site of a state is a carbene.
+    pub fn is_transient(&self, row: &[u64]) -> bool {
+        (0..self.sites.len())
+            .any(|site| self.contents[self.list_of[site]][self.sites[site].get(row) as usize].is_carbene)
     }
 
     /// Unpacks a state into a decoration of the same frame, whose buffers are reused.

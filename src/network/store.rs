@@ -9,7 +9,7 @@
 
 use std::ops::Range;
 
-use super::fraction::Fraction;
+use crate::rules::Fraction;
 use super::limits::Outcome;
 use super::states::StateTable;
 use crate::frame::{Decoration, Prepared};
