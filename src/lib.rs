@@ -3,3 +3,4 @@
 pub mod frame;
 pub mod molecule;
 pub mod rules;
+pub mod smiles;

@@ -25,11 +25,11 @@ fn rooms_named(source: &str) -> Vec<&str> {
     starts.map(|rest| rest.split(|c: char| !c.is_alphanumeric() && c != '_').next().unwrap_or("")).collect()
 }
 
-fn check_folder(folder: &Path, room: &str, own: u8, n_files: &mut usize) {
+fn check_folder(folder: &Path, own: u8, n_files: &mut usize) {
     for entry in std::fs::read_dir(folder).unwrap() {
         let path = entry.unwrap().path();
         if path.is_dir() {
-            check_folder(&path, room, own, n_files);
+            check_folder(&path, own, n_files);
         } else if path.extension().is_some_and(|e| e == "rs") {
             let source = std::fs::read_to_string(&path).unwrap();
             for named in rooms_named(&source) {
@@ -49,7 +49,7 @@ fn no_room_imports_from_a_floor_above() {
     for (room, own) in FLOORS {
         let folder = src.join(room);
         if folder.exists() {
-            check_folder(&folder, room, own, &mut n_files);
+            check_folder(&folder, own, &mut n_files);
         }
     }
     assert!(n_files > 20, "the sources were found");

@@ -344,7 +344,7 @@ impl Molecule {
 
     /// Whether an aromatic atom has a double bond in each Kekulé form (carbon always; nitrogen
     /// and its kin with two ligands; oxygen and its kin never).
-    fn takes_ring_double_bond(&self, atom: usize) -> bool {
+    pub(crate) fn takes_ring_double_bond(&self, atom: usize) -> bool {
         let a = self.atom(atom);
         let n_ligands = self.degree(atom) + usize::from(a.n_hydrogens);
         let exocyclic_double = self.neighbours(atom).any(|(_, order, _)| order == BondOrder::Double);

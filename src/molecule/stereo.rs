@@ -4,15 +4,23 @@
 //! single-bonded ligands, no two of them hydrogens or halogens of one kind; or a C=C in no ring
 //! of fewer than eight atoms, not cumulated, with the same said of each end. Whether two
 //! branches are alike is not asked of a candidate. It is asked once for all by the canonical
-//! form: a unit is *real* when reversing it gives another compound.
+//! form: units are *idle* when every setting of them gives one compound, and those are
+//! forgotten. Units that a relabelling could exchange are forgotten together or not at all: of
+//! the three centres of cis,cis,trans-1,3,5-trimethylcyclohexane each of two can be reversed and
+//! give the same compound again, but not both, so all three are kept.
 
-use super::canonical::canonical_code;
+use std::collections::BTreeMap;
+
+use super::canonical::{Code, canonical_code};
 use super::element::Element;
 use super::graph::{BondOrder, Geometry, Handedness, Molecule};
 use super::rings::{Adjacency, smallest_ring_through_bond};
 
 /// Smallest ring in which a double bond may have either geometry.
 pub const SMALLEST_RING_WITH_GEOMETRY: usize = 8;
+
+/// Most units whose settings are tried together before they are kept untried.
+const MOST_IDLE_UNITS: usize = 8;
 
 /// How much configuration tells compounds apart.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Default)]
@@ -143,19 +151,25 @@ impl Molecule {
         self.drop_idle_units(&candidates);
     }
 
-    /// Forgets, one at a time, each given unit whose two settings give one compound whatever
-    /// the units forgotten before it are set to.
+    /// Forgets the given units that tell nothing, a class of alike ones at a time.
     fn drop_idle_units(&mut self, candidates: &[Unit]) {
+        let given: Vec<Unit> = candidates.iter().copied().filter(|&u| self.is_given(u)).collect();
+        if given.is_empty() {
+            return;
+        }
         let classes = super::canonical::refined_classes(self);
-        let mut idle: Vec<Unit> = Vec::new();
-        for &unit in candidates.iter().filter(|&&u| self.is_given(u)).collect::<Vec<_>>() {
-            if self.is_plainly_real(unit, &classes) || idle.len() >= 8 {
-                continue;
+        let code = canonical_code(self);
+        let mut alike: BTreeMap<(usize, usize), Vec<Unit>> = BTreeMap::new();
+        for unit in given.into_iter().filter(|&u| !self.is_plainly_real(u, &classes)) {
+            if self.settings_agree(&[unit], &code) {
+                alike.entry(self.class_of(unit, &classes)).or_default().push(unit);
             }
-            let mut probe = idle.clone();
-            probe.push(unit);
-            if self.settings_agree(&probe) {
-                idle.push(unit);
+        }
+        let mut idle: Vec<Unit> = Vec::new();
+        for class in alike.into_values() {
+            let both = [idle.as_slice(), &class].concat();
+            if both.len() <= MOST_IDLE_UNITS && self.settings_agree(&both, &code) {
+                idle = both;
             }
         }
         for unit in idle {
@@ -163,15 +177,24 @@ impl Molecule {
         }
     }
 
-    /// Whether all settings of these units, the others kept, give one compound.
-    fn settings_agree(&self, units: &[Unit]) -> bool {
-        let code = canonical_code(self);
+    fn class_of(&self, unit: Unit, classes: &[usize]) -> (usize, usize) {
+        match unit {
+            Unit::Centre(atom) => (classes[atom], usize::MAX),
+            Unit::DoubleBond(bond) => {
+                let (a, b, _) = self.bond(bond);
+                (classes[a].min(classes[b]), classes[a].max(classes[b]))
+            }
+        }
+    }
+
+    /// Whether all settings of these units, the others kept, give the compound with this code.
+    fn settings_agree(&self, units: &[Unit], code: &Code) -> bool {
         (1..1u32 << units.len()).all(|mask| {
             let mut other = self.clone();
             for (_, &unit) in units.iter().enumerate().filter(|(i, _)| mask >> i & 1 == 1) {
                 other.reverse_unit(unit);
             }
-            canonical_code(&other) == code
+            canonical_code(&other) == *code
         })
     }
 
@@ -215,7 +238,7 @@ impl Molecule {
         if open.len() >= 24 || n_settings > most {
             return Err(n_settings);
         }
-        let mut found = std::collections::BTreeMap::new();
+        let mut found = BTreeMap::new();
         for mask in 0..n_settings {
             let mut isomer = plain.clone();
             for (i, &unit) in open.iter().enumerate() {
