@@ -1,1 +1,2 @@
 //! Tests of behaviour, one module a capability.
+mod rule_files;
