@@ -4,6 +4,7 @@
 //! it is about, a label for what stands there, and what to do.
 
 use super::syntax::Span;
+use crate::molecule::Unit;
 
 /// One mistake in a rule file.
 #[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
@@ -250,6 +251,32 @@ pub enum SelectionError {
         /// All known names: rules, then groups.
         known: Vec<String>,
     },
+}
+
+/// A rule that could not be applied to a molecule.
+#[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
+pub enum ApplyError {
+    /// The molecule stands for several compounds.
+    #[error("{} has no configuration, so this is not one compound; expand it to its isomers first", unit_name(*.unit))]
+    NotSpecified {
+        /// The first stereo-unit that is open.
+        unit: Unit,
+    },
+    /// A step would have more configurations than are enumerated.
+    #[error("one step leaves {n_units} stereo-units open, at most {most} are enumerated")]
+    TooManyOutcomes {
+        /// How many.
+        n_units: usize,
+        /// The limit.
+        most: usize,
+    },
+}
+
+fn unit_name(unit: Unit) -> String {
+    match unit {
+        Unit::Centre(atom) => format!("the centre at atom {}", atom + 1),
+        Unit::DoubleBond(bond) => format!("the double bond that is bond {}", bond + 1),
+    }
 }
 
 impl RuleFileError {
