@@ -8,9 +8,9 @@
 
 use super::check::error;
 use super::edits::find_span;
-use super::error::{RuleError, RuleErrorKind};
+use super::error::{RuleError, RuleErrorKind, budget};
 use super::rule::{Amount, AtomRef, Case, Counted, Edit, Partner};
-use super::syntax::{CaseText, EditItem, Reagent, Span};
+use super::syntax::{CaseText, EditItem, FindItem, Reagent, Span};
 use crate::molecule::{BondOrder, Element};
 
 /// Reports every account of a case that does not balance.
@@ -26,8 +26,7 @@ pub(super) fn balance(tree: &CaseText, case: &Case, errors: &mut Vec<RuleError>)
     for new in 0..case.new_atoms.len() {
         new_atom_has_valence(tree, case, new, errors);
     }
-    mass(tree, case, errors);
-    electrons(tree, case, errors);
+    accounts(tree, case, errors);
 }
 
 fn orders_stay_in_range(tree: &CaseText, case: &Case, errors: &mut Vec<RuleError>) {
@@ -40,13 +39,25 @@ fn orders_stay_in_range(tree: &CaseText, case: &Case, errors: &mut Vec<RuleError
                 a: case.atoms[bond.a].label.clone(),
                 b: case.atoms[bond.b].label.clone(),
                 order: ["single", "double", "triple"][order as usize % 3],
-                verb: if change > 0 { "raised so far" } else { "lowered so far" },
+                verb: match change {
+                    1 => "raised",
+                    -1 => "lowered",
+                    2.. => "raised so far",
+                    _ => "lowered so far",
+                },
             };
             let hint = "under `find`, give this bond only orders that the edit can change";
-            errors.push(error(kind, &find_span(tree, &case.atoms[bond.a].label), "one of its ends").hint(hint));
+            let span = bond_span(tree, &case.atoms[bond.a].label, &case.atoms[bond.b].label);
+            errors.push(error(kind, &span, "this bond").hint(hint));
             break;
         }
     }
+}
+
+/// Where a bond is named under `find`.
+fn bond_span(tree: &CaseText, a: &str, b: &str) -> Span {
+    let is_it = |item: &FindItem| matches!(item, FindItem::Bond(x, y, _) if x.value == a && y.value == b);
+    tree.find.iter().find(|item| is_it(&item.value)).map_or_else(|| tree.edit_heading.clone(), |item| item.span.clone())
 }
 
 fn order_change(case: &Case, index: usize, of: Partner) -> i32 {
@@ -165,56 +176,48 @@ fn new_label(tree: &CaseText, new: usize) -> (String, Span) {
     labels.skip(new).map(|l| (l.value.clone(), l.span.clone())).next().unwrap_or((String::new(), 0..0))
 }
 
-fn mass(tree: &CaseText, case: &Case, errors: &mut Vec<RuleError>) {
+/// Oxygen by water, then hydrogen by protons, then charge by electrons: each account is asked
+/// with the ones before put right, so that the hints together balance the case.
+fn accounts(tree: &CaseText, case: &Case, errors: &mut Vec<RuleError>) {
+    for (new, element) in case.new_atoms.iter().enumerate().filter(|(_, e)| **e != Element::O) {
+        let kind = RuleErrorKind::NoSupply { element: element.name() };
+        errors.push(error(kind, &new_label(tree, new).1, "brought in here").hint("only `new oxygen` can balance"));
+    }
+    let waters = case.new_atoms.iter().filter(|&&e| e == Element::O).map(|_| 1).sum::<i32>();
     let hydrogens = |edit: &Edit| match edit {
         Edit::AddHydrogen(_) => 1,
         Edit::TakeHydrogen(_) => -1,
         _ => 0,
     };
-    let brought: i32 = case.edits.iter().map(hydrogens).sum();
-    let supplied = case.protons + 2 * case.water;
-    if brought != supplied {
-        let needed = brought - 2 * case.water;
-        let kind = RuleErrorKind::Mass { what: "hydrogen", brought, supplied };
-        errors.push(unbalanced(tree, kind, Reagent::Proton, needed));
-    }
-    for element in Element::ALL {
-        let brought = case.new_atoms.iter().filter(|&&e| e == element).map(|_| 1).sum::<i32>();
-        let supplied = if element == Element::O { case.water } else { 0 };
-        if brought == supplied {
-            continue;
-        }
-        let kind = RuleErrorKind::Mass { what: element.name(), brought, supplied };
-        errors.push(match element {
-            Element::O => unbalanced(tree, kind, Reagent::Water, brought),
-            _ => error(kind, &tree.edit_heading, "these edits")
-                .hint("water is all that can bring in an atom: only oxygen"),
-        });
-    }
-}
-
-fn electrons(tree: &CaseText, case: &Case, errors: &mut Vec<RuleError>) {
+    let protons = case.edits.iter().map(hydrogens).sum::<i32>() - 2 * waters;
     let charge = |edit: &Edit| match *edit {
         Edit::Release { .. } => 1,
         Edit::Charge(_, by) => -i32::from(by),
         _ => 0,
     };
-    let needed = case.protons + case.edits.iter().map(charge).sum::<i32>();
-    if needed != case.electrons {
-        let kind = RuleErrorKind::Electrons { needed, supplied: case.electrons };
-        errors.push(unbalanced(tree, kind, Reagent::Electron, needed));
-    }
+    let electrons = protons + case.edits.iter().map(charge).sum::<i32>();
+    account(tree, "oxygen", Reagent::Water, waters, case.water, errors);
+    account(tree, "hydrogen", Reagent::Proton, protons, case.protons, errors);
+    account(tree, "charge", Reagent::Electron, electrons, case.electrons, errors);
 }
 
-/// The error for an account that a `uses` or `gives` line would put right.
-fn unbalanced(tree: &CaseText, kind: RuleErrorKind, reagent: Reagent, needed: i32) -> RuleError {
+fn account(
+    tree: &CaseText,
+    what: &'static str,
+    reagent: Reagent,
+    needed: i32,
+    found: i32,
+    errors: &mut Vec<RuleError>,
+) {
+    if needed == found {
+        return;
+    }
     let line = tree.budgets.iter().find(|line| line.value.reagent == reagent);
     let (span, label) = line.map_or((&tree.edit_heading, "these edits"), |line| (&line.span, "this line"));
-    let verb = if needed < 0 { "gives" } else { "uses" };
-    let plural = if needed.abs() == 1 || reagent == Reagent::Water { "" } else { "s" };
-    let hint = match needed {
-        0 => format!("leave out the line of the {}s", reagent.word()),
-        n => format!("write `{verb} {} {}{plural}`", n.abs(), reagent.word()),
+    let hint = match (needed, line) {
+        (0, _) => "leave the line out".to_owned(),
+        (n, None) => format!("add {} below the edits", budget(reagent, n)),
+        (n, Some(_)) => format!("write {}", budget(reagent, n)),
     };
-    error(kind, span, label).hint(hint)
+    errors.push(error(RuleErrorKind::Unbalanced { what, reagent, needed, found }, span, label).hint(hint));
 }

@@ -29,27 +29,42 @@ use super::syntax::{Budget, CaseOption, CaseText, Reagent, RuleText, Setting, Sp
 /// # Ok::<(), haloshed::rules::error::RuleFileError>(())
 /// ```
 pub fn read_rules(file: &str, text: &str) -> Result<Vec<Rule>, RuleFileError> {
+    read_rules_beside(file, text, &[])
+}
+
+/// Reads and checks a rule file whose rules are added to others, or replace them by name.
+pub(super) fn read_rules_beside(file: &str, text: &str, others: &[Rule]) -> Result<Vec<Rule>, RuleFileError> {
     let (trees, mut errors) = rule_file(text);
-    let mut rules: Vec<Rule> = Vec::new();
-    for tree in &trees {
-        let checked = rule(tree, text, &mut errors);
-        if rules.iter().any(|known| known.name == tree.name.value) {
-            let kind = RuleErrorKind::NameTaken { name: tree.name.value.clone() };
-            errors.push(error(kind, &tree.name.span, "the second one").hint("give one of them another name"));
-        }
-        rules.push(checked);
-    }
-    for tree in &trees {
-        if rules.iter().any(|r| r.group.as_ref() == Some(&tree.name.value)) {
-            let kind = RuleErrorKind::NameIsGroup { name: tree.name.value.clone() };
-            errors.push(error(kind, &tree.name.span, "this rule").hint("give the rule or the group another name"));
-        }
-    }
+    let rules: Vec<Rule> = trees.iter().map(|tree| rule(tree, text, &mut errors)).collect();
+    names(&trees, &rules, others, &mut errors);
     if errors.is_empty() {
         return Ok(rules);
     }
     errors.sort_by_key(|e| (e.span.start, e.span.end));
     Err(RuleFileError { file: file.to_owned(), text: text.to_owned(), errors })
+}
+
+/// Checks that no two rules of a file have one name, and that no name is a rule's and a group's.
+fn names(trees: &[RuleText], rules: &[Rule], others: &[Rule], errors: &mut Vec<RuleError>) {
+    let staying = || others.iter().filter(|other| rules.iter().all(|rule| rule.name != other.name));
+    for (index, tree) in trees.iter().enumerate() {
+        let name = &tree.name;
+        if rules[..index].iter().any(|before| before.name == name.value) {
+            let kind = RuleErrorKind::NameTaken { name: name.value.clone() };
+            errors.push(error(kind, &name.span, "the second one").hint("give one of them another name"));
+        }
+        if rules.iter().chain(staying()).any(|rule| rule.group.as_ref() == Some(&name.value)) {
+            let kind = RuleErrorKind::NameIsGroup { name: name.value.clone() };
+            errors.push(error(kind, &name.span, "this rule").hint("give the rule or the group another name"));
+        }
+        for setting in &tree.settings {
+            let Setting::Group(group) = &setting.value else { continue };
+            if staying().any(|other| other.name == *group) {
+                let kind = RuleErrorKind::NameIsGroup { name: group.clone() };
+                errors.push(error(kind, &setting.span, "this group").hint("give the group another name"));
+            }
+        }
+    }
 }
 
 /// An error without a hint.

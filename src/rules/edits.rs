@@ -101,6 +101,14 @@ impl Resolver<'_> {
             }
             return None;
         };
+        for (place, atom) in [(a, at_a), (b, at_b)] {
+            if self.case.atoms[atom].kind == AtomKind::Aryl {
+                let kind =
+                    RuleErrorKind::WrongKind { label: place.written(), is: "an aromatic carbon", wanted: "a `site`" };
+                self.errors.push(error(kind, &place.span, "bonds here never change"));
+                return None;
+            }
+        }
         let bond = bond_between(self.case, at_a, at_b).filter(|_| partner == other);
         if bond.is_none() {
             self.no_bond(a, b);

@@ -3,7 +3,7 @@
 //! A kind carries facts; the sentence is made in its `Display`. An error adds the byte range
 //! it is about, a label for what stands there, and what to do.
 
-use super::syntax::Span;
+use super::syntax::{Reagent, Span};
 use crate::molecule::Unit;
 
 /// One mistake in a rule file.
@@ -142,7 +142,7 @@ pub enum RuleErrorKind {
         b: String,
     },
     /// A bond would be raised above triple or lowered below single.
-    #[error("the bond {a}-{b} may be {order} before, which cannot be {verb}")]
+    #[error("the bond {a}-{b} may be {order}, which cannot be {verb}")]
     OrderRange {
         /// One end.
         a: String,
@@ -203,23 +203,23 @@ pub enum RuleErrorKind {
         /// Too many, too few, or in all where another number is wanted.
         direction: String,
     },
-    /// Atoms of an element, or hydrogens, do not balance.
-    #[error("{what} does not balance: the edits bring {brought}, water and protons supply {supplied}")]
-    Mass {
-        /// The element.
+    /// An account of a case does not balance.
+    #[error("{what} does not balance: expected {}, found {}", budget(*.reagent, *.needed), budget(*.reagent, *.found))]
+    Unbalanced {
+        /// Which account: an element, or charge.
         what: &'static str,
-        /// Net number brought in by the edits.
-        brought: i32,
-        /// Net number that `uses` and `gives` supply.
-        supplied: i32,
-    },
-    /// Charge does not balance.
-    #[error("electrons do not balance: the edits need {needed}, uses and gives supply {supplied}")]
-    Electrons {
-        /// How many the edits need.
+        /// What balances it.
+        reagent: Reagent,
+        /// How many the edits need; negative when they set some free.
         needed: i32,
-        /// How many are supplied.
-        supplied: i32,
+        /// How many `uses` and `gives` say.
+        found: i32,
+    },
+    /// An edit brings in an element that nothing supplies.
+    #[error("nothing supplies {element}: water brings oxygen and hydrogen only")]
+    NoSupply {
+        /// The element's name.
+        element: &'static str,
     },
     /// `retain configuration` where nothing can be retained.
     #[error("no atom loses one ligand and gains one, so no configuration can be retained")]
@@ -307,6 +307,17 @@ pub(super) fn nearest<'a>(found: &str, known: impl Iterator<Item = &'a str>) -> 
         distance <= 2.min(k.chars().count() / 2) || (found.len() > 3 && k.starts_with(&found))
     };
     scored.iter().filter(is_near).take(3).map(|&(_, k)| k.to_owned()).collect()
+}
+
+/// A `uses` or `gives` line, or the lack of one.
+pub(super) fn budget(reagent: Reagent, n: i32) -> String {
+    let word = reagent.word();
+    let ending = if n.abs() == 1 || reagent == Reagent::Water { "" } else { "s" };
+    match n {
+        0 => format!("no {word}{ending}"),
+        1.. => format!("`uses {n} {word}{ending}`"),
+        _ => format!("`gives {} {word}{ending}`", -n),
+    }
 }
 
 fn plural(n: u32) -> &'static str {

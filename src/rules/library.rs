@@ -3,7 +3,7 @@
 //! A rule set keeps its rules in the order they came; a rule of the same name takes the place
 //! of the one before. Which of them are used is chosen by names of rules and groups.
 
-use super::check::read_rules;
+use super::check::read_rules_beside;
 use super::error::{RuleFileError, SelectionError, nearest};
 use super::rule::Rule;
 
@@ -54,9 +54,9 @@ impl RuleSet {
     /// This set with the rules of a file added; those of a known name replace it in its place.
     ///
     /// # Errors
-    /// * anything in the file is wrong: every mistake in it
+    /// * anything in the file is wrong, or a rule has the name of a group: every mistake in it
     pub fn with_file_text(mut self, file: &str, text: &str) -> Result<RuleSet, RuleFileError> {
-        for rule in read_rules(file, text)? {
+        for rule in read_rules_beside(file, text, &self.rules)? {
             match self.rules.iter_mut().find(|known| known.name == rule.name) {
                 Some(known) => *known = rule,
                 None => self.rules.push(rule),

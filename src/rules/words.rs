@@ -21,6 +21,7 @@ const NAME: Expectation = Expectation::Thing("a name (lower-case words joined by
 const NUMBER: Expectation = Expectation::Thing("a number up to 999");
 const TEXT: Expectation = Expectation::Thing("a text in double quotes");
 const SPACE: Expectation = Expectation::Thing("a space");
+const MORE: Expectation = Expectation::Thing("more on this line");
 const END: Expectation = Expectation::Thing("the end of the line");
 
 fn is_blank(c: char) -> bool {
@@ -38,7 +39,8 @@ pub(super) fn indent(i: Rest) -> Parsed<Rest> {
 
 /// `1*WSP`
 pub(super) fn gap(i: Rest) -> Parsed<Rest> {
-    take_while1(is_blank).parse(i).or_else(|_: nom::Err<Mistake>| i.wrong(SPACE))
+    let missing = if i.text.is_empty() { MORE } else { SPACE };
+    take_while1(is_blank).parse(i).or_else(|_: nom::Err<Mistake>| i.wrong(missing))
 }
 
 /// What may follow the last word of a line; line breaks have been taken off.
