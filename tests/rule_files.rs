@@ -405,3 +405,13 @@ fn points_inside(text: &str) {
         assert!(!error.to_string().is_empty());
     }
 }
+
+#[test]
+fn the_rules_shown_in_the_guide_are_right() {
+    let guide = include_str!("../docs/grammar.md");
+    let blocks: Vec<&str> = guide.split("```rules\n").skip(1).filter_map(|b| b.split("```").next()).collect();
+    assert_eq!(blocks.len(), 4);
+    for block in blocks {
+        assert_eq!(mistakes(block), Vec::<String>::new(), "in\n{block}");
+    }
+}
