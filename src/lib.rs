@@ -1,4 +1,5 @@
 //! Finds everything that a halogenated compound can turn into under reducing conditions.
 
+pub mod frame;
 pub mod molecule;
 pub mod rules;

@@ -1,5 +1,9 @@
 //! Tests of behaviour, one module a capability.
+
+#![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
+
 mod drawing;
+mod frame;
 mod reference;
 mod rule_files;
 mod rule_products;

@@ -11,8 +11,8 @@
 //! compounds cost no more than their skeletons.
 //!
 //! # Source
-//! B. D. McKay, Congressus Numerantium 30, 45 (1981), in its simplest form; refinement as in
-//! the colouring of H. L. Morgan, J. Chem. Doc. 5, 107 (1965).
+//! Brendan McKay, Congressus Numerantium 30, 45 (1981), in its simplest form; refinement as in
+//! the colouring of Morgan, J. Chem. Doc. 5, 107 (1965).
 
 use super::graph::{Geometry, Handedness, Ligand, Molecule};
 
@@ -171,8 +171,7 @@ fn search(molecule: &Molecule) -> (Code, Vec<usize>) {
         centres: (0..molecule.n_atoms()).filter(|&a| molecule.handedness(a).is_some()).collect(),
         bonds: (0..molecule.n_bonds()).filter(|&b| molecule.geometry(b).is_some()).collect(),
     };
-    let mut search =
-        Search { molecule, folded: &folded, units, best: None, first: None, automorphisms: Vec::new() };
+    let mut search = Search { molecule, folded: &folded, units, best: None, first: None, automorphisms: Vec::new() };
     search.descend(&colours, &mut Vec::new());
     search.best.unwrap_or_default()
 }

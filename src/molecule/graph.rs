@@ -158,6 +158,9 @@ impl Molecule {
     }
 
     /// Both ends and the order of the bond with this index.
+    ///
+    /// # Panics
+    /// If there is no such bond.
     pub fn bond(&self, index: usize) -> (usize, usize, BondOrder) {
         let edge = EdgeIndex::new(index);
         let (a, b) = self.graph.edge_endpoints(edge).expect("bond index comes from this molecule");
@@ -181,12 +184,10 @@ impl Molecule {
 
     /// Neighbours of an atom as (atom index, order, bond index), in no fixed order.
     pub fn neighbours(&self, atom: usize) -> impl Iterator<Item = (usize, BondOrder, usize)> + '_ {
-        self.graph
-            .edges(NodeIndex::new(atom))
-            .map(move |e| {
-                let other = if e.source().index() == atom { e.target() } else { e.source() };
-                (other.index(), *e.weight(), e.id().index())
-            })
+        self.graph.edges(NodeIndex::new(atom)).map(move |e| {
+            let other = if e.source().index() == atom { e.target() } else { e.source() };
+            (other.index(), *e.weight(), e.id().index())
+        })
     }
 
     /// Number of neighbours, hydrogens not counted.

@@ -88,10 +88,10 @@ impl Molecule {
     fn has_twin_ligands(&self, atom: usize, besides: Option<usize>) -> bool {
         let mut seen = [0u8; 4];
         for (n, _, _) in self.neighbours(atom) {
-            if Some(n) != besides {
-                if let Some(halogen) = self.leaving_halogen(n) {
-                    seen[halogen as usize] += 1;
-                }
+            if Some(n) != besides
+                && let Some(halogen) = self.leaving_halogen(n)
+            {
+                seen[halogen as usize] += 1;
             }
         }
         self.atom(atom).n_hydrogens > 1 || seen.iter().any(|&n| n > 1)
@@ -186,8 +186,7 @@ impl Molecule {
         let code = canonical_code(self);
         (1..1u32 << units.len()).all(|mask| {
             let mut other = self.clone();
-            for (i, &unit) in units.iter().enumerate().filter(|(i, _)| mask >> i & 1 == 1) {
-                let _ = i;
+            for (_, &unit) in units.iter().enumerate().filter(|(i, _)| mask >> i & 1 == 1) {
                 other.reverse_unit(unit);
             }
             canonical_code(&other) == code
