@@ -3,6 +3,7 @@
 #![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
 
 mod drawing;
+mod engines_agree;
 mod frame;
 mod reference;
 mod rule_files;

@@ -24,7 +24,7 @@ fn check(text: &str, expected: &[&str]) {
 
 /// A rule with these lines under `find`, under `edit` and below.
 fn rule(find: &[&str], edit: &[&str], below: &[&str]) -> String {
-    let lines = |of: &[&str]| of.iter().map(|l| format!("    {l}\n")).collect::<String>();
+    let lines = |of: &[&str]| of.iter().flat_map(|l| ["    ", l, "\n"]).collect::<String>();
     format!("rule a\n  says \"x\"\n  find\n{}  edit\n{}{}", lines(find), lines(edit), lines(below))
 }
 
@@ -383,7 +383,7 @@ proptest! {
     #[test]
     fn any_lines_of_the_language_are_read_without_panic(picks in proptest::collection::vec(0usize..200, 0..40)) {
         let lines: Vec<&str> = SHIPPED.iter().flat_map(|(_, text)| text.lines()).collect();
-        let text: String = picks.iter().map(|&i| format!("{}\n", lines[i % lines.len()])).collect();
+        let text: String = picks.iter().flat_map(|&i| [lines[i % lines.len()], "\n"]).collect();
         points_inside(&text);
     }
 
