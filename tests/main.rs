@@ -2,5 +2,10 @@
 
 #![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
 
+mod drawing;
+mod engines_agree;
 mod floors;
 mod frame;
+mod reference;
+mod rule_files;
+mod rule_products;
