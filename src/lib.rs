@@ -5,3 +5,4 @@ pub mod molecule;
 pub mod network;
 pub mod rules;
 pub mod smiles;
+pub mod thermo;

@@ -10,3 +10,4 @@ mod network;
 mod reference;
 mod rule_files;
 mod rule_products;
+mod thermo;
