@@ -47,7 +47,6 @@ fn committed_tables_are_what_the_fit_gives() {
             assert_same_table(file, &std::fs::read_to_string(&path).unwrap(), text);
         }
     }
-    println!("{}", fitted.report);
 }
 
 /// E' of the step between two compounds at the usual conditions, with its uncertainty, V.
@@ -78,7 +77,6 @@ fn potentials_from_handbook_rows_are_met() {
         ("ClC(Cl)(Cl)C(Cl)(Cl)Cl", "ClC(Cl)=C(Cl)Cl", 1.12),
     ] {
         let (found, sd) = e_volt(from, to);
-        println!("{from} {to} {found:.3} +- {sd:.3} expected {expected}");
         assert!((found - expected).abs() < 0.030, "{from} to {to}: {found:.3} V, expected {expected}");
         assert!(sd > 0.002 && sd < 0.06, "{from} to {to}: sd {sd:.3} V");
     }
