@@ -2,5 +2,6 @@
 
 pub mod frame;
 pub mod molecule;
+pub mod network;
 pub mod rules;
 pub mod smiles;

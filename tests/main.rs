@@ -6,6 +6,7 @@ mod drawing;
 mod engines_agree;
 mod floors;
 mod frame;
+mod network;
 mod reference;
 mod rule_files;
 mod rule_products;

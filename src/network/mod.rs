@@ -4,12 +4,12 @@
 //! network is), [`enumerate`](mod@enumerate) (how it is made; [`states`] and [`outside`] help),
 //! and [`graph`] (petgraph's traits over it).
 
-pub mod limits;
-pub mod states;
-pub mod store;
-mod outside;
 pub mod enumerate;
 pub mod graph;
+pub mod limits;
+mod outside;
+pub mod states;
+pub mod store;
 
 pub use enumerate::{EnumerateError, enumerate};
 pub use limits::{Limit, Limits, Outcome};

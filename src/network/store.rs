@@ -9,11 +9,11 @@
 
 use std::ops::Range;
 
-use crate::rules::Fraction;
 use super::limits::Outcome;
 use super::states::StateTable;
 use crate::frame::{Decoration, Prepared};
 use crate::molecule::{Identity, Molecule};
+use crate::rules::Fraction;
 
 /// Number of a compound in its network.
 pub type CompoundId = u32;
@@ -202,9 +202,8 @@ impl Network {
     pub fn n_bytes(&self) -> (usize, usize) {
         let states: usize =
             self.frames.iter().map(|f| f.states.n_bytes() + f.compounds.capacity() * size_of::<CompoundId>()).sum();
-        let compounds = states
-            + self.homes.capacity() * size_of::<Home>()
-            + self.row_starts.capacity() * size_of::<usize>();
+        let compounds =
+            states + self.homes.capacity() * size_of::<Home>() + self.row_starts.capacity() * size_of::<usize>();
         (compounds, self.steps.capacity() * size_of::<PackedStep>())
     }
 

@@ -1,8 +1,8 @@
 //! The general engine: a rule applied to a molecule, atom by atom.
 //!
 //! It is written to be plainly right, and is the measure for the fast engine in `frame`. Every
-//! way for the rule to act (a [`change`](super::change): a distinct set of bonds cut) gives
-//! the products of its [`outcome`](super::outcome), in equal parts.
+//! way for the rule to act (a `change`: a distinct set of bonds cut) gives
+//! the products of its `outcome`, in equal parts.
 //!
 //! Configuration of idle units. A unit whose two settings give one compound was forgotten by
 //! the molecule, yet once a match has cut one of two like branches it is real, and follows

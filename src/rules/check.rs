@@ -1,8 +1,8 @@
 //! Makes a [`Rule`] of a [`RuleText`], or says what is wrong with it.
 //!
 //! This file sees to what concerns a rule as a whole: its name and settings. Each case goes
-//! through [`pattern`](super::pattern) (labels, what to find), [`edits`](super::edits) (what
-//! to do) and [`balance`](super::balance) (valence, mass, charge). Every mistake is gathered;
+//! through `pattern` (labels, what to find), `edits` (what
+//! to do) and `balance` (valence, mass, charge). Every mistake is gathered;
 //! a rule comes out only if there is none.
 
 use super::balance::balance;

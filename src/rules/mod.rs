@@ -2,7 +2,7 @@
 //!
 //! Read [`rule`] first: the checked rule. Text comes in by [`parse`], which makes a tree
 //! ([`syntax`]) line by line; [`check`] makes rules of the tree or says what is wrong
-//! ([`error`]); [`library`] keeps the rules at hand and answers to their names. [`apply`] is
+//! ([`error`]); [`library`] keeps the rules at hand and answers to their names. [`mod@apply`] is
 //! the general engine, the measure for the fast one in `frame`.
 
 pub mod apply;

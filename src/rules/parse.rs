@@ -1,7 +1,7 @@
 //! Reads a rule file into [`RuleText`], unchecked.
 //!
 //! The language is `grammar/rules.abnf`; a production there and the function here (or in
-//! [`lines`](super::lines), [`words`](super::words)) have the same name. Nothing is looked up
+//! `lines`, `words`) have the same name. Nothing is looked up
 //! and nothing is balanced: that is the work of [`check`](super::check).
 //!
 //! A line that cannot be read is reported and stands in for any line that could be in its
