@@ -3,5 +3,6 @@
 pub mod frame;
 pub mod molecule;
 pub mod network;
+pub mod output;
 pub mod rules;
 pub mod smiles;
