@@ -2,7 +2,7 @@
 //!
 //! What leaves is [`record`]s: plain structs, the same in every format, from which the JSON
 //! schema is derived. A network is handed over as [`Records`], which makes a record when it is
-//! asked for one, so that a large network is never in memory twice. A [`Writer`] turns records
+//! asked for one ([`assemble`]), so that a large network is never in memory twice. A [`Writer`] turns records
 //! into one format; [`json`], [`jsonl`] and [`csv`] stream, [`table`], [`summary`] and [`dot`]
 //! are for reading. [`steps`] writes half-reactions, [`explain`] the parts of one Gibbs energy.
 //! [`file`](mod@file) is where they are written to. Numbers are rounded in [`decimals`] and nowhere else.
@@ -11,6 +11,7 @@
 
 pub mod record;
 pub mod decimals;
+pub mod assemble;
 pub mod format;
 pub mod json;
 pub mod jsonl;
@@ -21,6 +22,7 @@ pub mod summary;
 pub mod dot;
 pub mod steps;
 pub mod explain;
+pub mod rule_list;
 pub mod file;
 
 use std::borrow::Cow;

@@ -6,6 +6,7 @@
 
 use std::io;
 
+use super::page::Direction;
 use super::style::NodeKind;
 use super::text::quoted;
 use super::{Figure, SMALL_POINTS};
@@ -19,7 +20,11 @@ pub(super) fn write_legend(figure: &Figure, out: &mut dyn io::Write) -> io::Resu
     let mut lower = Vec::new();
     write_kinds(figure, &mut upper, &mut lower, out)?;
     write_rules(figure, &mut upper, &mut lower, out)?;
-    for rank in [&upper, &lower].into_iter().filter(|rank| rank.len() > 1) {
+    for rank in [&mut upper, &mut lower].into_iter().filter(|rank| rank.len() > 1) {
+        if figure.page.direction == Direction::Right {
+            // Graphviz fills such a rank from the bottom.
+            rank.reverse();
+        }
         writeln!(out, "    {{ rank=same; {} [style=invis]; }}", rank.join(" -> "))?;
     }
     writeln!(out, "  }}")?;
@@ -60,7 +65,7 @@ fn write_rules(
         let text = format!("{}: {}", style.mark, rule.replace('-', "-\n"));
         writeln!(out, "    a{index} [shape=point, width=0.02];")?;
         writeln!(out, "    b{index} [shape=plaintext, label={}];", quoted(&text))?;
-        writeln!(out, "    a{index} -> b{index} [style={}, arrowhead={}];", style.line, style.arrow)?;
+        writeln!(out, "    a{index} -> b{index} [style={}, arrowhead={}, weight=100];", style.line, style.arrow)?;
         upper.push(format!("a{index}"));
         lower.push(format!("b{index}"));
     }

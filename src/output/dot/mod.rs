@@ -139,7 +139,7 @@ impl Figure {
         let is_onward = generation(step.to) > generation(step.from);
         // Graphviz routes arrows within a rank badly when their text takes up room there.
         let (label, constraint) = if is_onward { ("label", "") } else { ("xlabel", ", constraint=false") };
-        let text = quoted(&format!("{mark} {energy}"));
+        let text = quoted(&format!(" {mark} {energy} "));
         writeln!(out, "  c{} -> c{} [{label}={text}, style={line}, arrowhead={arrow}{constraint}];", step.from, step.to)
     }
 
