@@ -3,6 +3,7 @@
 pub mod frame;
 pub mod molecule;
 pub mod network;
+pub mod output;
 pub mod rules;
 pub mod smiles;
 pub mod thermo;

@@ -7,6 +7,7 @@ mod engines_agree;
 mod floors;
 mod frame;
 mod network;
+mod output;
 mod reference;
 mod rule_files;
 mod rule_products;

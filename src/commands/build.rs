@@ -1,0 +1,155 @@
+//! From a request to a network with energies: the library calls that `network` and `steps`
+//! share.
+
+use std::num::NonZeroUsize;
+use std::time::{Duration, Instant};
+
+use clap::{Args, ValueEnum};
+use haloshed::molecule::{self, Molecule};
+use haloshed::network::{Limit, Limits, Network, Outcome, enumerate};
+use haloshed::output::assemble::Assembled;
+use haloshed::output::record::{Conditions, FORMAT, Header, Identity, Program};
+use haloshed::rules::Rule;
+
+use super::failure::Failure;
+use super::report::Report;
+use super::seam::{NoEnergies, NoRegistry};
+
+/// What a network is asked for.
+#[derive(Debug)]
+pub(crate) struct NetworkRequest {
+    pub(crate) parent: Molecule,
+    pub(crate) rules: Vec<Rule>,
+    pub(crate) identity: IdentityChoice,
+    pub(crate) limits: Limits,
+    pub(crate) n_threads: NonZeroUsize,
+    pub(crate) conditions: Conditions,
+}
+
+/// A network and how long it took.
+#[derive(Debug)]
+pub(crate) struct Built {
+    network: Network,
+    rules: Vec<Rule>,
+    header: Header,
+    pub(crate) enumeration: Duration,
+}
+
+/// How compounds are told apart.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum IdentityChoice {
+    /// Connectivity alone
+    Constitutional,
+    /// Connectivity and E/Z
+    Geometric,
+    /// Connectivity, E/Z and tetrahedral configuration
+    Full,
+}
+
+/// Options that `network` and `steps` share.
+#[derive(Debug, Args)]
+#[command(next_help_heading = "Identity and speed")]
+pub(crate) struct BuildArgs {
+    /// Tell compounds apart to this depth.
+    #[arg(long, value_enum, default_value = "geometric")]
+    pub(crate) identity: IdentityChoice,
+
+    /// Use this many threads; the result is the same for any number [default: one for each core].
+    #[arg(long, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=1024))]
+    threads: Option<u16>,
+}
+
+impl BuildArgs {
+    /// The number of threads asked for.
+    pub(crate) fn n_threads(&self) -> NonZeroUsize {
+        let asked = self.threads.and_then(|n| NonZeroUsize::new(n.into()));
+        asked.or_else(|| std::thread::available_parallelism().ok()).unwrap_or(NonZeroUsize::MIN)
+    }
+}
+
+impl IdentityChoice {
+    fn of_molecules(self) -> molecule::Identity {
+        match self {
+            IdentityChoice::Constitutional => molecule::Identity::Constitutional,
+            IdentityChoice::Geometric => molecule::Identity::Geometric,
+            IdentityChoice::Full => molecule::Identity::Full,
+        }
+    }
+
+    fn of_records(self) -> Identity {
+        match self {
+            IdentityChoice::Constitutional => Identity::Constitutional,
+            IdentityChoice::Geometric => Identity::Geometric,
+            IdentityChoice::Full => Identity::Full,
+        }
+    }
+}
+
+/// Enumerates a network.
+pub(crate) fn build_network(request: NetworkRequest) -> Result<Built, Failure> {
+    let started = Instant::now();
+    let NetworkRequest { parent, rules, identity, limits, n_threads, conditions } = request;
+    let network = enumerate(&[parent], &rules, identity.of_molecules(), limits, n_threads.get())
+        .map_err(|error| Report::plain(error.to_string()))?;
+    let header = Header {
+        format: FORMAT.to_owned(),
+        program: Program::this(),
+        parents: network.parents().map(|id| id + 1).collect(),
+        identity: identity.of_records(),
+        conditions,
+        rules: rules.iter().map(|rule| rule.name.clone()).collect(),
+        complete: network.outcome() == Outcome::Complete,
+        warnings: warnings(&network),
+    };
+    Ok(Built { network, rules, header, enumeration: started.elapsed() })
+}
+
+impl Built {
+    /// What holds for the whole network.
+    pub(crate) fn header(&self) -> &Header {
+        &self.header
+    }
+
+    /// Number of compounds.
+    pub(crate) fn n_compounds(&self) -> usize {
+        self.network.n_compounds()
+    }
+
+    /// The network as records.
+    pub(crate) fn records(&self) -> Assembled<'_> {
+        Assembled {
+            header: self.header.clone(),
+            network: &self.network,
+            rules: &self.rules,
+            registry: &NoRegistry,
+            energies: &NoEnergies,
+        }
+    }
+}
+
+/// What the reader must know before using the network.
+fn warnings(network: &Network) -> Vec<String> {
+    let mut warnings = Vec::new();
+    let n_parents = network.parents().len();
+    if n_parents > 1 {
+        warnings.push(format!("the compound was given without its configuration: all {n_parents} isomers are parents"));
+    }
+    if let Outcome::Cut { limit, first_unexpanded } = network.outcome() {
+        let n_left = network.n_compounds() - first_unexpanded;
+        let (compounds, option) = (if n_left == 1 { "compound" } else { "compounds" }, option_of(limit));
+        warnings.push(format!(
+            "the network is incomplete: {limit} was reached, and {n_left} {compounds} from id {} on were not \
+             followed further; raise {option} to go on",
+            first_unexpanded + 1
+        ));
+    }
+    warnings
+}
+
+fn option_of(limit: Limit) -> &'static str {
+    match limit {
+        Limit::Compounds(_) => "--max-compounds",
+        Limit::Generation(_) => "--max-generation",
+        Limit::Time(_) => "--time-limit",
+    }
+}

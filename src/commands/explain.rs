@@ -1,0 +1,27 @@
+//! `haloshed explain`: where the Gibbs energy of a compound comes from.
+
+use clap::Args;
+use haloshed::output::explain::write_explanation;
+
+use super::Ending;
+use super::compound::read_compound;
+use super::destination::Destination;
+use super::failure::Failure;
+use super::seam::explain_compound;
+
+/// Print where the Gibbs energy of a compound comes from, group by group.
+///
+/// Example: haloshed explain "ClC=C(Cl)Cl"
+#[derive(Debug, Args)]
+pub(crate) struct ExplainArgs {
+    /// The compound: a SMILES, a name, an abbreviation or a CAS number.
+    #[arg(allow_hyphen_values = true)]
+    compound: String,
+}
+
+/// Runs the command.
+pub(crate) fn run(args: &ExplainArgs) -> Result<Ending, Failure> {
+    let explanation = explain_compound(&read_compound(&args.compound)?)?;
+    Destination::Stdout.write(|out| write_explanation(&explanation, out))?;
+    Ok(Ending::Whole)
+}

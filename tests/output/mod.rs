@@ -1,0 +1,5 @@
+//! What leaves the program: every writer, its whole output read before it was accepted.
+
+mod sample;
+
+mod figures;
