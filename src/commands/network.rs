@@ -170,7 +170,8 @@ impl Plan {
     }
 
     fn write(self, built: &Built) -> Result<(), Failure> {
-        let records = built.records();
+        let valued = built.valued();
+        let records = built.records(&valued);
         let fill = |writer: &dyn Writer, destination: Destination| {
             destination.write(|out: &mut dyn io::Write| writer.write(&records as &dyn Records, out))
         };
@@ -178,7 +179,9 @@ impl Plan {
             Plan::One(format, destination) => {
                 if format == Format::Dot && !fits_a_page(built.n_compounds()) {
                     let n = built.n_compounds();
-                    warn(&format!("a figure of {n} compounds cannot be read on one page; --max-generation or --rules-only make it smaller"));
+                    warn(&format!(
+                        "a figure of {n} compounds cannot be read on one page; --max-generation or --rules-only make it smaller"
+                    ));
                 }
                 fill(writer(format, built).as_ref(), destination)
             }
@@ -231,6 +234,6 @@ fn writer(format: Format, built: &Built) -> Box<dyn Writer> {
         Format::Jsonl => Box::new(Jsonl),
         Format::Csv => Box::new(Csv::Compounds),
         Format::Dot => Box::new(Dot),
-        Format::Summary => Box::new(Summary { enumeration: Some(built.enumeration), energies: None }),
+        Format::Summary => Box::new(Summary { enumeration: Some(built.enumeration), energies: Some(built.valuation) }),
     }
 }

@@ -43,7 +43,8 @@ pub(crate) fn run(args: &StepsArgs) -> Result<Ending, Failure> {
         n_threads: args.build.n_threads(),
         conditions: args.conditions.conditions(),
     };
-    let built = build_network(request)?;
-    Destination::Stdout.write(|out| HalfReactions.write(&built.records(), out))?;
+    let built = build_network(request)?.cut_on_purpose();
+    let valued = built.valued();
+    Destination::Stdout.write(|out| HalfReactions.write(&built.records(&valued), out))?;
     Ok(Ending::Whole)
 }

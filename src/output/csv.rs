@@ -181,12 +181,7 @@ fn step_headings() -> io::Result<::csv::StringRecord> {
     Ok(::csv::Reader::from_reader(text.as_slice()).headers()?.clone())
 }
 
-fn step_row<'a>(
-    step: &'a Step,
-    from_condensed: &'a str,
-    to_condensed: &'a str,
-    conditions: Conditions,
-) -> StepRow<'a> {
+fn step_row<'a>(step: &'a Step, from_condensed: &'a str, to_condensed: &'a str, conditions: Conditions) -> StepRow<'a> {
     let ByHalogen { fluorine, chlorine, bromine, iodine } = step.released;
     let halide = conditions.halide_mol_per_litre;
     StepRow {
