@@ -12,6 +12,7 @@ import itertools
 import random
 
 from rdkit import Chem, RDLogger
+from rdkit.Chem import AllChem
 
 RDLogger.DisableLog("rdApp.*")
 # The older perception forgets double bonds whose ends differ by configuration alone.
@@ -360,3 +361,9 @@ def random_smiles(compound, identity, how_many, seed):
         if len(found) > how_many:
             break
     return (found[1:] or found)[:how_many]
+
+
+def fits_in_space(smiles):
+    """Whether RDKit can build the isomer in space: a small bridged system has no in,out form."""
+    mol = Chem.AddHs(Chem.MolFromSmiles(smiles))
+    return AllChem.EmbedMolecule(mol, randomSeed=7, maxAttempts=20) == 0

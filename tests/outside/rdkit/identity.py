@@ -3,10 +3,7 @@
 import csv
 import sys
 
-from rdkit import Chem
-from rdkit.Chem import AllChem
-
-from compound import isomers, random_smiles
+from compound import fits_in_space, isomers, random_smiles
 
 # Configuration left open is expanded to isomers (at most MOST of them, evenly picked).
 MOST = 6
@@ -95,12 +92,6 @@ CC1NC(Cl)C1Br
 Cl[C-](Cl)Cl
 C[N+]1(CCl)CCC(Cl)C1
 """.split()
-
-
-def fits_in_space(smiles):
-    """Whether RDKit can build the isomer in space: a small bridged system has no in,out form."""
-    mol = Chem.AddHs(Chem.MolFromSmiles(smiles))
-    return AllChem.EmbedMolecule(mol, randomSeed=7, maxAttempts=20) == 0
 
 
 def main(path):
