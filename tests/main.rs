@@ -4,3 +4,4 @@
 
 mod floors;
 mod frame;
+mod outside;

@@ -255,7 +255,25 @@ class Compound:
         return mol
 
     def inchi(self, identity="full"):
-        return Chem.MolToInchi(self.to_rdkit(identity))
+        """The identity. With centres left open InChI marks a double bond on a ring although
+        either mark means the same; such a mark is left out."""
+        found = Chem.MolToInchi(self.to_rdkit(identity))
+        if identity != "geometric" or "/b" not in found:
+            return found
+        plain = self.copy()
+        for a, b in [k for k in self.geom if any(self.in_ring(end, k) for end in k)]:
+            turned = plain.copy()
+            x, y, cis = turned.geom[a, b]
+            turned.geom[a, b] = (x, y, not cis)
+            if Chem.MolToInchi(turned.to_rdkit(identity)) == found:
+                del plain.geom[a, b]
+                found = Chem.MolToInchi(plain.to_rdkit(identity))
+        return found
+
+    def in_ring(self, end, pair):
+        """Whether an end of a double bond is in a ring without that bond."""
+        around = [n for n in self.near[end] if n not in pair]
+        return len(around) == 2 and self.distance(*around, (end,)) is not None
 
     def smiles(self, identity="full"):
         """A SMILES that reads back to this compound, found by trying; carbenes bracketed."""
@@ -272,7 +290,7 @@ class Compound:
             # Read and written once more, to lose marks that mean nothing; as drafted if that harms.
             again = Chem.MolToSmiles(Chem.MolFromSmiles(draft))
             for text in (again, draft):
-                if "[H]" not in text and read(text).inchi(identity) == want:
+                if "[H]" not in text and inchi_as_written(text, identity) == want:
                     return text
         raise ValueError(f"no SMILES reads back to {want}; tried {drafts[:3]}")
 
@@ -318,6 +336,14 @@ def read_with_open_units(smiles):
     given = set(c.hand) | set(c.geom)
     c.complete()
     return c, [u for u in [*c.hand, *c.geom] if u not in given]
+
+
+def inchi_as_written(smiles, identity):
+    """InChI of a SMILES with nothing set that it leaves open."""
+    c, open_units = read_with_open_units(smiles)
+    for unit in open_units:
+        (c.hand if isinstance(unit, int) else c.geom).pop(unit)
+    return c.inchi(identity)
 
 
 def isomers(smiles, identity):
