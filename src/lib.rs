@@ -2,5 +2,7 @@
 
 pub mod frame;
 pub mod molecule;
+pub mod network;
 pub mod rules;
 pub mod smiles;
+pub mod thermo;

@@ -2,6 +2,13 @@
 
 #![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
 
+mod drawing;
+mod engines_agree;
 mod floors;
 mod frame;
+mod network;
 mod outside;
+mod reference;
+mod rule_files;
+mod rule_products;
+mod thermo;

@@ -1,6 +1,6 @@
 //! Rules compiled for a frame: every place where an in-frame case can act.
 //!
-//! A case is *compilable* when it stays in the frame, loses the configuration it touches, lets
+//! A case is *compilable* when it has at most four atoms, stays in the frame, loses the configuration it touches, lets
 //! each halogen be any of the four, and is as symmetric in what it asks as in what it does. The
 //! last makes it enough to take one placing of each set that the pattern's own symmetry makes
 //! alike: two placings that cut the same bonds would be one match counted twice. Other cases
@@ -11,9 +11,13 @@ use super::skeleton::Frame;
 use crate::molecule::BondOrder;
 use crate::rules::rule::{AtomRef, Case, Configuration, Edit, RingLimits};
 
+/// Most pattern atoms of a compiled case.
+const MOST_ATOMS: usize = 4;
+
 /// Whether a case can be compiled.
 pub fn is_compilable(case: &Case) -> bool {
     case.is_in_frame()
+        && case.atoms.len() <= MOST_ATOMS
         && case.configuration == Configuration::EveryOutcome
         && case.halogens.iter().all(|h| h.allowed == [true; 4])
         && permutations(case.atoms.len()).iter().all(|p| !keeps_edits(case, p) || keeps_demands(case, p))

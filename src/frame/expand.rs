@@ -17,8 +17,9 @@ use super::ring_limits::RingLimits;
 use super::skeleton::Frame;
 use crate::molecule::{Halogen, Molecule};
 
-/// Most configuration units that one match may leave open; rules touch few atoms.
-const MOST_OPEN_UNITS: usize = 12;
+/// Most configuration units that one match can leave open: a compiled case has at most four
+/// atoms ([`compile`](super::compile)), each a centre and the end of at most three other bonds.
+const MOST_OPEN_UNITS: usize = 16;
 
 /// A frame made ready for a set of cases.
 #[derive(Debug, Clone)]

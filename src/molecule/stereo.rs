@@ -43,6 +43,16 @@ pub enum Unit {
     DoubleBond(usize),
 }
 
+impl Unit {
+    /// Whether compounds that differ in this unit alone are told apart.
+    pub fn is_told_by(self, identity: Identity) -> bool {
+        match self {
+            Unit::Centre(_) => identity == Identity::Full,
+            Unit::DoubleBond(_) => identity >= Identity::Geometric,
+        }
+    }
+}
+
 impl Molecule {
     /// Neighbour lists, for ring questions.
     pub fn adjacency(&self) -> Adjacency {
@@ -95,14 +105,17 @@ impl Molecule {
         self.atom(atom).n_hydrogens > 1 || seen.iter().any(|&n| n > 1)
     }
 
-    fn is_given(&self, unit: Unit) -> bool {
+    /// Whether a unit carries a setting.
+    pub fn is_given(&self, unit: Unit) -> bool {
         match unit {
             Unit::Centre(atom) => self.handedness(atom).is_some(),
             Unit::DoubleBond(bond) => self.geometry(bond).is_some(),
         }
     }
 
-    fn set_unit(&mut self, unit: Unit, first: bool) {
+    /// Gives a unit the first of its two settings, or the second: which is which means nothing
+    /// but that they differ.
+    pub fn set_unit(&mut self, unit: Unit, first: bool) {
         match unit {
             Unit::Centre(atom) => {
                 let value = if first { Handedness::Anticlockwise } else { Handedness::Clockwise };
@@ -138,6 +151,12 @@ impl Molecule {
     /// and where reversing it changes nothing.
     pub fn keep_real_units(&mut self, identity: Identity) {
         let candidates = self.candidate_units();
+        self.clear_all_but(&candidates, identity);
+        self.drop_idle_units(&candidates);
+    }
+
+    /// Forgets configuration at all units but these, and where the identity does not tell it.
+    pub fn clear_all_but(&mut self, candidates: &[Unit], identity: Identity) {
         for atom in 0..self.n_atoms() {
             if identity < Identity::Full || !candidates.contains(&Unit::Centre(atom)) {
                 self.set_handedness(atom, None);
@@ -148,7 +167,6 @@ impl Molecule {
                 self.set_geometry(bond, None);
             }
         }
-        self.drop_idle_units(&candidates);
     }
 
     /// Forgets the given units that tell nothing, a class of alike ones at a time.

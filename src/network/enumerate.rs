@@ -13,11 +13,12 @@ use rayon::prelude::*;
 
 use super::limits::{Limit, Limits, Outcome};
 use super::outside::General;
-use super::store::{CompoundId, FrameStates, Home, Network};
 use super::states::StateTable;
+use super::store::{CompoundId, FrameStates, Home, Network};
 use crate::frame::{Frame, Layout, Prepared, TooLarge, Workspace, compile};
 use crate::molecule::{Halogen, Identity, Molecule};
-use crate::rules::{ApplyError, Case, Fraction, Rule};
+use crate::rules::error::ApplyError;
+use crate::rules::{Case, Fraction, Rule};
 
 /// Compounds that one thread expands at a time.
 const BLOCK: usize = 128;
@@ -61,10 +62,11 @@ pub enum EnumerateError {
 /// ```
 /// use haloshed::molecule::Identity;
 /// use haloshed::network::{Limits, enumerate};
-/// use haloshed::rules::RuleSet;
+/// use haloshed::rules::{RuleSet, Selection};
 ///
 /// let parent = haloshed::smiles::read("ClC(Cl)=C(Cl)Cl")?;
-/// let rules = RuleSet::shipped().select(Some("hydrogenolysis"), None)?;
+/// let hydrogenolysis = Selection { only: Some(vec!["hydrogenolysis".to_owned()]), with: vec![] };
+/// let rules = RuleSet::shipped().select(&hydrogenolysis)?;
 /// let network = enumerate(&[parent], &rules, Identity::Geometric, Limits::default(), 1)?;
 /// // PCE, TCE, three DCE, VC and ethene.
 /// assert_eq!(network.n_compounds(), 7);
@@ -135,7 +137,8 @@ impl<'a> Run<'a> {
         let palette = Halogen::ALL.into_iter().filter(holds).collect();
         let mut cases = Vec::new();
         for (number, rule) in rules.iter().enumerate().filter(|(_, rule)| rule.generations.is_none()) {
-            cases.extend(rule.cases.iter().filter(|case| compile::is_compilable(case)).map(|case| (number as u8, case)));
+            cases
+                .extend(rule.cases.iter().filter(|case| compile::is_compilable(case)).map(|case| (number as u8, case)));
         }
         Ok(Run { network: Network::empty(identity), palette, cases, general: General::of(rules), limits })
     }
@@ -239,7 +242,10 @@ impl<'a> Run<'a> {
             let Expansion { products, rows, .. } = &mut expansion;
             prepared.expand(row, buffers, &mut |product| {
                 let rule = self.cases[product.case].0;
-                products.push(Found::InFrame { rule, degeneracy: Fraction::new(product.n_matches, product.n_outcomes) });
+                products.push(Found::InFrame {
+                    rule,
+                    degeneracy: Fraction::new(u64::from(product.n_matches), u64::from(product.n_outcomes)),
+                });
                 rows.extend_from_slice(product.row);
             });
             self.general.expand(&self.network, compound, generation, |rule, degeneracy, molecule| {
@@ -265,7 +271,9 @@ impl<'a> Run<'a> {
             let (own_rows, rest) = rows.split_at(n_rows * n_words);
             rows = rest;
             let is_tight = self.network.n_compounds() + n_products > self.limits.max_compounds;
-            if is_tight && self.count_new(frame, own_rows, &own) + self.network.n_compounds() > self.limits.max_compounds {
+            if is_tight
+                && self.count_new(frame, own_rows, &own) + self.network.n_compounds() > self.limits.max_compounds
+            {
                 return Ok(Some(compound));
             }
             steps.clear();
@@ -292,9 +300,9 @@ impl<'a> Run<'a> {
             rows.chunks_exact(frame.prepared.layout.n_words()).filter(|row| frame.states.find(row).is_none()).collect();
         new.sort_unstable();
         new.dedup();
-        let outside = products.iter().filter(
-            |f| matches!(f, Found::Outside { molecule, .. } if self.network.find(molecule).is_none()),
-        );
+        let outside = products
+            .iter()
+            .filter(|f| matches!(f, Found::Outside { molecule, .. } if self.network.find(molecule).is_none()));
         new.len() + outside.count()
     }
 
@@ -339,7 +347,7 @@ fn merge(steps: &mut Vec<(u8, CompoundId, Fraction)>) {
     for next in 1..steps.len() {
         let (rule, to, degeneracy) = steps[next];
         if (steps[kept].0, steps[kept].1) == (rule, to) {
-            steps[kept].2 = steps[kept].2 + degeneracy;
+            steps[kept].2 = steps[kept].2.plus(degeneracy);
         } else {
             kept += 1;
             steps[kept] = steps[next];

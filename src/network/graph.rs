@@ -5,7 +5,7 @@
 
 use petgraph::graph::DiGraph;
 use petgraph::visit::{
-    Data, EdgeRef, GraphBase, GraphRef, IntoEdgeReferences, IntoEdges, IntoNeighbors, IntoNodeIdentifiers, NodeCount,
+    Data, EdgeRef, GraphBase, IntoEdgeReferences, IntoEdges, IntoNeighbors, IntoNodeIdentifiers, NodeCount,
     NodeIndexable, Visitable,
 };
 
@@ -24,8 +24,6 @@ impl Data for Network {
     type NodeWeight = ();
     type EdgeWeight = ();
 }
-
-impl GraphRef for &Network {}
 
 impl NodeCount for Network {
     fn node_count(&self) -> usize {
@@ -90,7 +88,7 @@ mod visited {
     }
 }
 
-impl<'a> IntoNodeIdentifiers for &'a Network {
+impl IntoNodeIdentifiers for &Network {
     type NodeIdentifiers = std::ops::Range<CompoundId>;
 
     fn node_identifiers(self) -> Self::NodeIdentifiers {

@@ -1,4 +1,4 @@
-//! Identity and isomers held against InChI, by way of RDKit.
+//! Identity and isomers held against InChI, by way of `RDKit`.
 //!
 //! `rdkit/README.md` says with which versions the tables were made, and how to make them again.
 
