@@ -3,7 +3,7 @@
 use clap::Args;
 use haloshed::output::explain::write_explanation;
 
-use super::Ending;
+use super::{CAUTION, Ending};
 use super::compound::read_compound;
 use super::destination::Destination;
 use super::failure::Failure;
@@ -13,6 +13,7 @@ use super::seam::explain_compound;
 ///
 /// Example: haloshed explain "ClC=C(Cl)Cl"
 #[derive(Debug, Args)]
+#[command(after_help = CAUTION)]
 pub(crate) struct ExplainArgs {
     /// The compound: a SMILES, a name, an abbreviation or a CAS number.
     #[arg(allow_hyphen_values = true)]
