@@ -6,3 +6,4 @@ pub mod network;
 pub mod output;
 pub mod rules;
 pub mod smiles;
+pub mod thermo;

@@ -11,3 +11,4 @@ mod output;
 mod reference;
 mod rule_files;
 mod rule_products;
+mod thermo;

@@ -156,6 +156,12 @@ impl Network {
         Step { index, from, to: packed.to, rule: (packed.rule_and_degeneracy & 0xFF) as usize, degeneracy }
     }
 
+    /// The compound with a canonical state of a frame, if it is in the network.
+    pub fn find_state(&self, frame: usize, row: &[u64]) -> Option<CompoundId> {
+        let states = &self.frames[frame];
+        states.states.find(row).map(|state| states.compounds[state])
+    }
+
     /// Frames with their states.
     pub fn frames(&self) -> &[FrameStates] {
         &self.frames
@@ -183,10 +189,15 @@ impl Network {
 
     /// A compound as a molecule, with the configuration that is real.
     pub fn molecule(&self, compound: CompoundId) -> Molecule {
-        let (prepared, _) = self.state(compound);
-        let mut molecule = prepared.frame.compose(&self.decoration(compound));
+        let mut molecule = self.molecule_as_stored(compound);
         molecule.keep_real_units(self.identity);
         molecule
+    }
+
+    /// A compound as a molecule with every candidate unit set, real or not.
+    pub(super) fn molecule_as_stored(&self, compound: CompoundId) -> Molecule {
+        let (prepared, _) = self.state(compound);
+        prepared.frame.compose(&self.decoration(compound))
     }
 
     /// The compound that a molecule is, if it is in the network. Configuration that the
