@@ -82,7 +82,7 @@ impl Figure {
             Direction::Right => "LR",
         };
         let size = self.page.inches.map_or_else(String::new, |(width, height)| format!("size=\"{width},{height}\", "));
-        writeln!(out, "  graph [{size}rankdir={direction}, margin=0.1, ranksep=0.45, nodesep=0.18,")?;
+        writeln!(out, "  graph [{size}rankdir={direction}, margin=0.1, ranksep=0.45, nodesep=0.14,")?;
         writeln!(out, "    fontname=\"Arial\", fontsize={SMALL_POINTS}, labelloc=b, labeljust=l,")?;
         writeln!(out, "    label=<{}>];", caption(&self.network))?;
         writeln!(
@@ -139,7 +139,7 @@ impl Figure {
         let is_onward = generation(step.to) > generation(step.from);
         // Graphviz routes arrows within a rank badly when their text takes up room there.
         let (label, constraint) = if is_onward { ("label", "") } else { ("xlabel", ", constraint=false") };
-        let text = quoted(&format!(" {mark} {energy} "));
+        let text = quoted(&format!(" {mark} {energy}"));
         writeln!(out, "  c{} -> c{} [{label}={text}, style={line}, arrowhead={arrow}{constraint}];", step.from, step.to)
     }
 
