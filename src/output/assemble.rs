@@ -9,6 +9,7 @@ use std::borrow::Cow;
 
 use super::Records;
 use super::record::{ByHalogen, Caution, Compound, GibbsOrigin, Header, Step};
+use crate::molecule::condensed::condensed;
 use crate::molecule::{Element, Molecule};
 use crate::network::{self, CompoundId, Network};
 use crate::rules::Rule;
@@ -149,7 +150,7 @@ impl Assembled<'_> {
         Compound {
             id: id + 1,
             formula: formula.to_string(),
-            condensed: smiles.clone(),
+            condensed: condensed(&molecule).unwrap_or_else(|| smiles.clone()),
             smiles,
             names,
             abbreviations,
