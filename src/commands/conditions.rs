@@ -39,12 +39,8 @@ pub(crate) struct ConditionArgs {
 impl ConditionArgs {
     /// The conditions, at 25 °C.
     pub(crate) fn conditions(&self) -> Conditions {
-        let halide_mol_per_litre = ByHalogen {
-            fluorine: self.fluoride,
-            chlorine: self.chloride,
-            bromine: self.bromide,
-            iodine: self.iodide,
-        };
+        let halide_mol_per_litre =
+            ByHalogen { fluorine: self.fluoride, chlorine: self.chloride, bromine: self.bromide, iodine: self.iodide };
         Conditions { temperature_kelvin: TEMPERATURE_KELVIN, ph: self.ph, halide_mol_per_litre }
     }
 }

@@ -3,11 +3,11 @@
 use clap::Args;
 use haloshed::output::explain::write_explanation;
 
-use super::{CAUTION, Ending};
 use super::compound::read_compound;
 use super::destination::Destination;
 use super::failure::Failure;
 use super::seam::explain_compound;
+use super::{CAUTION, Ending};
 
 /// Print where the Gibbs energy of a compound comes from, group by group.
 ///

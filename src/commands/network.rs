@@ -15,7 +15,6 @@ use haloshed::output::summary::Summary;
 use haloshed::output::table::Table;
 use haloshed::output::{Records, Writer};
 
-use super::{CAUTION, Ending};
 use super::build::{BuildArgs, Built, Extent, NetworkRequest, build_network};
 use super::compound::read_compound;
 use super::conditions::ConditionArgs;
@@ -24,6 +23,7 @@ use super::failure::Failure;
 use super::quantity::time;
 use super::report::warn;
 use super::rule_choice::RuleArgs;
+use super::{CAUTION, Ending};
 
 /// List everything a compound can turn into, and every step with its potential.
 ///

@@ -4,7 +4,6 @@ use clap::Args;
 use haloshed::output::Writer;
 use haloshed::output::steps::HalfReactions;
 
-use super::{CAUTION, Ending};
 use super::build::{BuildArgs, Extent, NetworkRequest, build_network};
 use super::compound::read_compound;
 use super::conditions::ConditionArgs;
@@ -12,10 +11,11 @@ use super::destination::Destination;
 use super::failure::Failure;
 use super::report::warn;
 use super::rule_choice::RuleArgs;
+use super::{CAUTION, Ending};
 
 /// Print the first half-reactions of a compound with E°, E' and uncertainty, highest first.
 ///
-/// Example: haloshed steps "ClCCCl" --ph 6.5
+/// Example: haloshed steps "ClC(Cl)C" --ph 6.5
 #[derive(Debug, Args)]
 #[command(after_help = CAUTION)]
 pub(crate) struct StepsArgs {

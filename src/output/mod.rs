@@ -9,21 +9,21 @@
 //!
 //! Nothing here prints, and nothing here calculates chemistry.
 
-pub mod record;
-pub mod decimals;
 pub mod assemble;
+pub mod csv;
+pub mod decimals;
+pub mod dot;
+pub mod explain;
+pub mod file;
 pub mod format;
 pub mod json;
 pub mod jsonl;
-pub mod csv;
 mod layout;
-pub mod table;
-pub mod summary;
-pub mod dot;
-pub mod steps;
-pub mod explain;
+pub mod record;
 pub mod rule_list;
-pub mod file;
+pub mod steps;
+pub mod summary;
+pub mod table;
 
 use std::borrow::Cow;
 use std::io;

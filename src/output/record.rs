@@ -6,6 +6,8 @@
 //!
 //! Invariant: a number that is not known is null, and a field beside it says why.
 
+use std::fmt::Write as _;
+
 use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
@@ -265,7 +267,7 @@ impl Conditions {
             format!("{} °C, pH {}", decimals::plain(self.temperature_kelvin - 273.15), decimals::plain(self.ph));
         for (activity, group) in groups {
             let each = if group.len() > 1 { "each " } else { "" };
-            text.push_str(&format!(", {} {each}{}", group.join(", "), decimals::concentration_text(activity)));
+            let _ = write!(text, ", {} {each}{}", group.join(", "), decimals::concentration_text(activity));
         }
         text
     }

@@ -16,7 +16,9 @@ pub(super) fn caption(network: &Network) -> String {
         format!("On the arrows: rule and E' in volts against SHE{}.", uncertainty(network)),
     ];
     if network.steps.iter().any(|step| step.e_volt.is_none()) {
-        lines.push("In parentheses: dG' in kJ/mol where no electron is transferred, ? where there is no estimate.".into());
+        lines.push(
+            "In parentheses: dG' in kJ/mol where no electron is transferred, ? where there is no estimate.".into(),
+        );
     }
     let markup = lines.iter().map(|line| format!("{}<br align=\"left\"/>", markup(line)));
     markup.collect()

@@ -14,6 +14,7 @@ mod page;
 pub mod style;
 pub mod text;
 
+use std::fmt::Write as _;
 use std::io;
 
 use self::caption::caption;
@@ -122,7 +123,7 @@ impl Figure {
         }
         if !compound.title().is_empty() {
             let lines: Vec<String> = name_lines(compound).iter().map(|line| markup(line)).collect();
-            label.push_str(&format!("<br/><font point-size=\"{SMALL_POINTS}\">{}</font>", lines.join("<br/>")));
+            let _ = write!(label, "<br/><font point-size=\"{SMALL_POINTS}\">{}</font>", lines.join("<br/>"));
         }
         let style = NodeKind::of(compound).attributes();
         writeln!(out, "    c{} [label=<{label}>, tooltip={}{style}];", compound.id, quoted(&compound.smiles))
