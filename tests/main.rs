@@ -9,6 +9,7 @@ mod floors;
 mod frame;
 mod network;
 mod output;
+mod outside;
 mod reference;
 mod rule_files;
 mod rule_products;

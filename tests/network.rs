@@ -64,7 +64,7 @@ fn trichloroethene_gives_its_three_dichloroethenes_once_each() {
         found.steps_from(0).map(|s| (smiles::write(&found.molecule(s.to)), s.degeneracy)).collect();
     let mut texts: Vec<&str> = products.iter().map(|(text, _)| text.as_str()).collect();
     texts.sort_unstable();
-    assert_eq!(texts, ["C(/Cl)=C/Cl", "C(/Cl)=C\\Cl", "C=C(Cl)Cl"]);
+    assert_eq!(texts, ["C=C(Cl)Cl", "Cl/C=C/Cl", "Cl/C=C\\Cl"]);
     assert!(products.iter().all(|(_, degeneracy)| *degeneracy == Fraction::new(1, 1)));
 }
 

@@ -2,18 +2,22 @@
 //! share.
 
 use std::num::NonZeroUsize;
+use std::ops::Range;
 use std::time::{Duration, Instant};
 
 use clap::{Args, ValueEnum};
 use haloshed::molecule::{self, Molecule};
-use haloshed::network::{Limit, Limits, Network, Outcome, enumerate};
-use haloshed::output::assemble::Assembled;
+use haloshed::network::{CompoundId, Limit, Limits, Network, Outcome, enumerate};
+use haloshed::output::assemble::{Assembled, Registry};
 use haloshed::output::record::{Conditions, FORMAT, Header, Identity, Program};
+use haloshed::output::valued::Valued;
 use haloshed::rules::Rule;
+use haloshed::smiles;
+use haloshed::thermo;
 
 use super::failure::Failure;
+use super::known::Catalogue;
 use super::report::Report;
-use super::seam::{NoEnergies, NoRegistry};
 
 /// What a network is asked for.
 #[derive(Debug)]
@@ -41,7 +45,12 @@ pub(crate) struct Built {
     network: Network,
     rules: Vec<Rule>,
     header: Header,
+    energies: thermo::Energies,
+    conditions: thermo::Conditions,
+    /// Time that the enumeration took.
     pub(crate) enumeration: Duration,
+    /// Time that the energies took.
+    pub(crate) valuation: Duration,
 }
 
 /// How compounds are told apart.
@@ -114,7 +123,17 @@ pub(crate) fn build_network(request: NetworkRequest) -> Result<Built, Failure> {
         complete: network.outcome() == Outcome::Complete,
         warnings: isomer_warning(&network).into_iter().chain(limit_warning(&network, extent)).collect(),
     };
-    Ok(Built { network, rules, header, enumeration: started.elapsed() })
+    let enumeration = started.elapsed();
+    let energies = thermo::energies(&network, thermo::shipped(), n_threads.get());
+    let valuation = started.elapsed().saturating_sub(enumeration);
+    let conditions = conditions_of(&header)?;
+    Ok(Built { network, rules, header, energies, conditions, enumeration, valuation })
+}
+
+/// The conditions of the header, checked.
+fn conditions_of(header: &Header) -> Result<thermo::Conditions, Failure> {
+    let halides = header.conditions.halide_mol_per_litre.pairs().map(|(_, activity)| activity);
+    thermo::Conditions::new(header.conditions.ph, halides).map_err(|error| Report::plain(error.to_string()).into())
 }
 
 impl Built {
@@ -123,19 +142,44 @@ impl Built {
         &self.header
     }
 
+    /// The parents.
+    pub(crate) fn parents(&self) -> Range<CompoundId> {
+        self.network.parents()
+    }
+
+    /// A compound's name and structure, for people.
+    pub(crate) fn title(&self, compound: CompoundId) -> String {
+        let molecule = self.network.molecule(compound);
+        let smiles = smiles::write(&molecule);
+        match Catalogue.entry(&smiles, &molecule).names.first() {
+            Some(name) => format!("{name}, {smiles}"),
+            None => smiles,
+        }
+    }
+
     /// Number of compounds.
     pub(crate) fn n_compounds(&self) -> usize {
         self.network.n_compounds()
     }
 
-    /// The network as records.
-    pub(crate) fn records(&self) -> Assembled<'_> {
+    /// The network with its energies.
+    pub(crate) fn valued(&self) -> Valued<'_> {
+        Valued {
+            network: &self.network,
+            energies: &self.energies,
+            scheme: thermo::shipped(),
+            conditions: self.conditions,
+        }
+    }
+
+    /// The network as records, which draw on `valued`.
+    pub(crate) fn records<'a>(&'a self, valued: &'a Valued<'a>) -> Assembled<'a> {
         Assembled {
             header: self.header.clone(),
             network: &self.network,
             rules: &self.rules,
-            registry: &NoRegistry,
-            energies: &NoEnergies,
+            registry: &Catalogue,
+            energies: valued,
         }
     }
 }

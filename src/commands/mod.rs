@@ -11,12 +11,13 @@ mod conditions;
 mod destination;
 mod explain;
 mod failure;
+mod known;
 mod network;
 mod quantity;
+mod refit;
 mod report;
 mod rule_choice;
 mod rules;
-mod seam;
 mod steps;
 
 use std::io;
@@ -45,6 +46,7 @@ enum Command {
     Steps(steps::StepsArgs),
     Rules(rules::RulesArgs),
     Explain(explain::ExplainArgs),
+    Refit(refit::RefitArgs),
 }
 
 /// How a command ended that gave a result.
@@ -63,6 +65,7 @@ pub(crate) fn main() -> ExitCode {
         Command::Steps(args) => steps::run(&args),
         Command::Rules(args) => rules::run(&args),
         Command::Explain(args) => explain::run(&args),
+        Command::Refit(args) => refit::run(&args),
     };
     match outcome {
         Ok(Ending::Whole) => ExitCode::SUCCESS,

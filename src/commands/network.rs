@@ -171,7 +171,8 @@ impl Plan {
     }
 
     fn write(self, built: &Built) -> Result<(), Failure> {
-        let records = built.records();
+        let valued = built.valued();
+        let records = built.records(&valued);
         let fill = |writer: &dyn Writer, destination: Destination| {
             destination.write(|out: &mut dyn io::Write| writer.write(&records as &dyn Records, out))
         };
@@ -235,6 +236,6 @@ fn writer(format: Format, built: &Built) -> Box<dyn Writer> {
         Format::Jsonl => Box::new(Jsonl),
         Format::Csv => Box::new(Csv::Compounds),
         Format::Dot => Box::new(Dot),
-        Format::Summary => Box::new(Summary { enumeration: Some(built.enumeration), energies: None }),
+        Format::Summary => Box::new(Summary { enumeration: Some(built.enumeration), energies: Some(built.valuation) }),
     }
 }

@@ -45,6 +45,7 @@ pub(crate) fn run(args: &StepsArgs) -> Result<Ending, Failure> {
     };
     let built = build_network(request)?;
     built.header().warnings.iter().for_each(|text| warn(text));
-    Destination::Stdout.write(|out| HalfReactions.write(&built.records(), out))?;
+    let valued = built.valued();
+    Destination::Stdout.write(|out| HalfReactions.write(&built.records(&valued), out))?;
     Ok(Ending::Whole)
 }

@@ -4,7 +4,8 @@
 //! schema is derived. A network is handed over as [`Records`], which makes a record when it is
 //! asked for one ([`assemble`]), so that a large network is never in memory twice. A [`Writer`] turns records
 //! into one format; [`json`], [`jsonl`] and [`csv`] stream, [`table`], [`summary`] and [`dot`]
-//! are for reading. [`steps`] writes half-reactions, [`explain`] the parts of one Gibbs energy.
+//! are for reading. [`steps`] writes half-reactions, [`explain`] the parts of one Gibbs energy;
+//! [`valued`] is where the values of both come from.
 //! [`file`](mod@file) is where they are written to. Numbers are rounded in [`decimals`] and nowhere else.
 //!
 //! Nothing here prints, and nothing here calculates chemistry.
@@ -24,6 +25,7 @@ pub mod rule_list;
 pub mod steps;
 pub mod summary;
 pub mod table;
+pub mod valued;
 
 use std::borrow::Cow;
 use std::io;

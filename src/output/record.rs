@@ -220,8 +220,8 @@ pub struct Step {
     pub e_sd_volt: Option<f64>,
     /// Why there is no potential; null where there is one.
     pub e_missing: Option<String>,
-    /// Gibbs energy of the step under the network's conditions, in kJ/mol of step; given where
-    /// no electron is transferred.
+    /// Gibbs energy of the step under the network's conditions, in kJ/mol; electrons count as
+    /// those of the standard hydrogen electrode.
     #[serde(serialize_with = "decimals::kj_per_mol")]
     pub gibbs_step_kj_per_mol: Option<f64>,
     /// Its standard uncertainty in kJ/mol.

@@ -8,7 +8,7 @@
 //! # Example
 //! ```
 //! let cis = haloshed::smiles::read(r"Cl/C=C\Cl")?;
-//! assert_eq!(haloshed::smiles::write(&cis), "C(/Cl)=C/Cl");
+//! assert_eq!(haloshed::smiles::write(&cis), r"Cl/C=C\Cl");
 //! # Ok::<(), haloshed::smiles::ReadError>(())
 //! ```
 

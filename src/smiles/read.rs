@@ -248,31 +248,37 @@ impl<'a> Reading<'a> {
             if order != BondOrder::Double {
                 continue;
             }
-            let (Some((at_a, above_a)), Some((at_b, above_b))) = (self.marked_ligand(a)?, self.marked_ligand(b)?)
-            else {
+            let (Some((at_a, above_a)), Some((at_b, above_b))) = (self.marked_ligand(a), self.marked_ligand(b)) else {
                 continue;
             };
+            self.check_marks(a)?;
+            self.check_marks(b)?;
             let geometry = if above_a == above_b { Geometry::Cis } else { Geometry::Trans };
             self.molecule.set_geometry_between(bond, at_a, at_b, geometry);
         }
         Ok(())
     }
 
-    /// A ligand of a double bond's end with a direction, and whether it lies above.
-    fn marked_ligand(&self, atom: usize) -> Result<Option<(Ligand, bool)>, ReadError> {
+    /// The first ligand of a double bond's end with a direction, and whether it lies above.
+    fn marked_ligand(&self, atom: usize) -> Option<(Ligand, bool)> {
         let drawn = self.drawn[atom];
-        let mut found: Option<(Ligand, bool)> = None;
+        let mut bonds = self.draft.atoms[drawn].bonds.iter();
+        bonds.find_map(|&bond| Some((self.ligand(drawn, bond), self.draft.bonds[bond].lies_above(drawn)?)))
+    }
+
+    /// Refuses two ligands of one end on the same side. Asked only where both ends are marked:
+    /// marks that serve the next double bonds alone may agree, as in `C=C(/C=C/Cl)/C=C/Cl`.
+    fn check_marks(&self, atom: usize) -> Result<(), ReadError> {
+        let drawn = self.drawn[atom];
+        let mut known = None;
         for &bond in &self.draft.atoms[drawn].bonds {
             let Some(above) = self.draft.bonds[bond].lies_above(drawn) else { continue };
-            match found {
-                Some((_, known)) if known == above => {
-                    return Err(ReadError::new(Kind::ContradictoryMarks, self.draft.bonds[bond].span.clone()));
-                }
-                Some(_) => {}
-                None => found = Some((self.ligand(drawn, bond), above)),
+            if known == Some(above) {
+                return Err(ReadError::new(Kind::ContradictoryMarks, self.draft.bonds[bond].span.clone()));
             }
+            known = Some(above);
         }
-        Ok(found)
+        Ok(())
     }
 }
 

@@ -1,6 +1,6 @@
 //! Writes canonical SMILES.
 //!
-//! Atoms are taken in canonical order: the text begins at the first, goes to lighter branches
+//! Atoms are taken in canonical order: the text begins at the first that ends a chain, goes to lighter branches
 //! before heavier ones, and so is the same for every numbering of one compound. Configuration
 //! that is not real is left out.
 
@@ -31,7 +31,7 @@ pub fn write(molecule: &Molecule) -> String {
     let tree = Tree::of(&ordered);
     let mut text = String::new();
     match Marks::of(&ordered, &tree.position) {
-        Ok(marks) => Writer { molecule: &ordered, tree: &tree, marks: &marks }.atom(0, &mut text),
+        Ok(marks) => Writer { molecule: &ordered, tree: &tree, marks: &marks }.atom(tree.start, &mut text),
         Err(conflict) => {
             // A ring of conjugated double bonds with hydrogens only: draw one of them.
             let (end, other, _) = ordered.bond(conflict.bond);
@@ -56,7 +56,7 @@ fn write_with_drawn_hydrogen(molecule: &Molecule, end: usize, other: usize) -> S
     let mut free = drawn.clone();
     free.set_geometry(bond, molecule.geometry(bond));
     if let Ok(marks) = Marks::of(&free, &tree.position) {
-        Writer { molecule: &free, tree: &tree, marks: &marks }.atom(0, &mut text);
+        Writer { molecule: &free, tree: &tree, marks: &marks }.atom(tree.start, &mut text);
     }
     text
 }
@@ -66,6 +66,8 @@ const STAND_IN_CHARGE: i8 = i8::MIN;
 
 /// The order in which atoms are written: branches, and rings by the bonds that close them.
 struct Tree {
+    /// The atom written first: the first in canonical order that ends a chain.
+    start: usize,
     children: Vec<Vec<usize>>,
     parent: Vec<Option<usize>>,
     /// By atom: ring bonds that open there, then those that close there, as (bond, number).
@@ -79,6 +81,7 @@ impl Tree {
     fn of(molecule: &Molecule) -> Tree {
         let n = molecule.n_atoms();
         let mut tree = Tree {
+            start: 0,
             children: vec![Vec::new(); n],
             parent: vec![None; n],
             opening: vec![Vec::new(); n],
@@ -86,10 +89,11 @@ impl Tree {
             position: vec![usize::MAX; n],
         };
         let mut is_seen = vec![false; n];
-        tree.grow(molecule, 0, &mut is_seen);
-        tree.sort_branches(0);
+        tree.start = (0..n).find(|&atom| molecule.degree(atom) <= 1).unwrap_or(0);
+        tree.grow(molecule, tree.start, &mut is_seen);
+        tree.sort_branches(tree.start);
         let mut next = 0;
-        tree.place(0, &mut next);
+        tree.place(tree.start, &mut next);
         tree.number_rings(molecule);
         tree
     }

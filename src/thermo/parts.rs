@@ -10,6 +10,7 @@ use std::hash::{Hash, Hasher};
 use rustc_hash::FxHasher;
 
 use crate::frame::{Decoration, Frame};
+use crate::molecule::Element;
 
 /// Standard uncertainty of moving a halogen to or from a carbon beside a fixed atom, kJ/mol:
 /// the scheme takes the fixed atom for a carbon there. Common practice, no source: anomeric
@@ -47,6 +48,7 @@ pub fn in_words(frame: &Frame) -> String {
         .map(|at| {
             let atom = frame.skeleton().atom(at);
             match atom.charge {
+                0 if atom.element == Element::C => "carbonyl or cyano carbon".to_owned(),
                 0 => atom.element.name().to_owned(),
                 charge => format!("{} of charge {charge:+}", atom.element.name()),
             }

@@ -69,7 +69,7 @@ impl StepOrigin {
 
 /// Why a step has no potential.
 #[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
-#[error("no estimate: the scheme has no values for groups with {parts}, and they change in this step")]
+#[error("the scheme has no values for groups with {parts}, and they change in this step")]
 pub struct Missing {
     /// What has no value, in words.
     pub parts: String,
