@@ -132,7 +132,8 @@ impl Figure {
     fn write_step(&self, step: &Step, out: &mut dyn io::Write) -> io::Result<()> {
         let RuleStyle { mark, line, arrow } = self.style_of(&step.rule);
         let energy = match (step.e_volt, step.gibbs_step_kj_per_mol) {
-            (Some(volt), _) => volt_text(volt, step.e_sd_volt),
+            // Two decimals are enough for a figure; the tables have them all.
+            (Some(volt), _) => volt_text(volt, None),
             (None, Some(kj)) => format!("({} kJ)", kj_text(kj, step.gibbs_step_sd_kj_per_mol)),
             (None, None) => "(?)".to_owned(),
         };
