@@ -40,7 +40,7 @@ const FORMULAS: [(&str, &str); 44] = [
     ("Cl[C]Cl", ":CCl2"),
     ("[CH2]", ":CH2"),
     ("C[C]Cl", "CH3CCl:"),
-    ("[CH]CCl", ":CHCH2Cl"),
+    ("[CH]CCl", "CH2ClCH:"),
     ("[C-]#[O+]", "CO"),
     ("C=O", "HCHO"),
     ("CO", "CH3OH"),

@@ -1,7 +1,6 @@
 //! `haloshed refit`: the fitted tables anew, from the measured rows.
 
 use std::fs;
-use std::io::Write;
 use std::path::{Path, PathBuf};
 
 use clap::Args;

@@ -15,7 +15,7 @@ use super::{CAUTION, Ending};
 
 /// Print the first half-reactions of a compound with E°, E' and uncertainty, highest first.
 ///
-/// Example: haloshed steps "ClCCCl" --ph 6.5
+/// Example: haloshed steps "ClC(Cl)C" --ph 6.5
 #[derive(Debug, Args)]
 #[command(after_help = CAUTION)]
 pub(crate) struct StepsArgs {
