@@ -45,7 +45,7 @@ const FORMULAS: [(&str, &str); 44] = [
     ("C=O", "HCHO"),
     ("CO", "CH3OH"),
     ("FC(F)(F)C(Cl)Br", "CHBrClCF3"),
-    ("ClCOCCl", "-"),
+    ("ClCOCCl", "CH2ClOCH2Cl"),
     ("ClC1CC1", "-"),
     ("c1ccccc1", "-"),
     ("C[N+](C)(C)CCl", "-"),

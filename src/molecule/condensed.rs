@@ -184,7 +184,7 @@ fn push_branches(out: &mut String, branches: &[String], is_end: bool) {
     let mut next = 0;
     while next < branches.len() {
         let n = branches[next..].iter().take_while(|b| **b == branches[next]).count();
-        let is_plain = is_end && next + n == branches.len() && n == 1 && !branches[next].starts_with(['=', 'C']);
+        let is_plain = is_end && next + n == branches.len() && n == 1;
         if is_plain {
             out.push_str(&branches[next]);
         } else {
