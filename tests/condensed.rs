@@ -49,7 +49,7 @@ const FORMULAS: [(&str, &str); 44] = [
     ("ClC1CC1", "-"),
     ("c1ccccc1", "-"),
     ("C[N+](C)(C)CCl", "-"),
-    (r"Cl/C=C\C=C", "(Z)-CHCl=CHCH=CH2"),
+    (r"Cl/C=C\C=C", "cis-CH2=CHCH=CHCl"),
 ];
 
 fn check(smiles: &str, expected: &str) {

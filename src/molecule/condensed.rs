@@ -141,8 +141,10 @@ fn atom_text(molecule: &Molecule, atom: usize, besides: [Option<usize>; 2], is_f
         out.push('O');
     }
     for element in [Element::Br, Element::Cl, Element::F, Element::I] {
-        let n =
-            around.iter().filter(|&&(n, _)| molecule.leaving_halogen(n).map(|h| h.element()) == Some(element)).count();
+        let n = around
+            .iter()
+            .filter(|&&(n, _)| molecule.leaving_halogen(n).map(super::element::Halogen::element) == Some(element))
+            .count();
         push_counted(&mut out, element.symbol(), n);
     }
     let mut branches: Vec<String> = around
