@@ -11,6 +11,7 @@ mod frame;
 mod network;
 mod output;
 mod outside;
+mod readme;
 mod reference;
 mod rule_files;
 mod rule_products;
