@@ -1,1 +1,4 @@
 //! Tests of behaviour, one module a capability.
+
+mod sentences;
+mod smiles;

@@ -171,8 +171,7 @@ fn search(molecule: &Molecule) -> (Code, Vec<usize>) {
         centres: (0..molecule.n_atoms()).filter(|&a| molecule.handedness(a).is_some()).collect(),
         bonds: (0..molecule.n_bonds()).filter(|&b| molecule.geometry(b).is_some()).collect(),
     };
-    let mut search =
-        Search { molecule, folded: &folded, units, best: None, first: None, automorphisms: Vec::new() };
+    let mut search = Search { molecule, folded: &folded, units, best: None, first: None, automorphisms: Vec::new() };
     search.descend(&colours, &mut Vec::new());
     search.best.unwrap_or_default()
 }

@@ -181,12 +181,10 @@ impl Molecule {
 
     /// Neighbours of an atom as (atom index, order, bond index), in no fixed order.
     pub fn neighbours(&self, atom: usize) -> impl Iterator<Item = (usize, BondOrder, usize)> + '_ {
-        self.graph
-            .edges(NodeIndex::new(atom))
-            .map(move |e| {
-                let other = if e.source().index() == atom { e.target() } else { e.source() };
-                (other.index(), *e.weight(), e.id().index())
-            })
+        self.graph.edges(NodeIndex::new(atom)).map(move |e| {
+            let other = if e.source().index() == atom { e.target() } else { e.source() };
+            (other.index(), *e.weight(), e.id().index())
+        })
     }
 
     /// Number of neighbours, hydrogens not counted.
@@ -342,14 +340,14 @@ impl Molecule {
     }
 
     /// Whether an aromatic atom has a double bond in each Kekulé form (carbon always; nitrogen
-    /// and its kin with two ligands; oxygen and its kin never).
-    fn takes_ring_double_bond(&self, atom: usize) -> bool {
+    /// and its kin with two ligands; oxygen and its kin never; an anion's lone pair takes its place).
+    pub fn takes_ring_double_bond(&self, atom: usize) -> bool {
         let a = self.atom(atom);
         let n_ligands = self.degree(atom) + usize::from(a.n_hydrogens);
         let exocyclic_double = self.neighbours(atom).any(|(_, order, _)| order == BondOrder::Double);
         match a.element {
             Element::C => !exocyclic_double && a.charge == 0,
-            Element::N | Element::P => n_ligands == 2 || a.charge == 1,
+            Element::N | Element::P => n_ligands == 2 && a.charge == 0 || a.charge == 1,
             Element::O | Element::S => a.charge == 1,
             _ => false,
         }

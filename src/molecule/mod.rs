@@ -4,13 +4,13 @@
 //! graph: [`rings`], [`aromatic`], [`stereo`], [`canonical`], [`formula`]. Nothing here knows
 //! a rule or a notation.
 
-pub mod element;
-pub mod graph;
-pub mod rings;
 pub mod aromatic;
 pub mod canonical;
-pub mod stereo;
+pub mod element;
 pub mod formula;
+pub mod graph;
+pub mod rings;
+pub mod stereo;
 
 pub use element::{Element, Halogen};
 pub use formula::Formula;

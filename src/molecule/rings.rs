@@ -117,9 +117,11 @@ fn has_small_triple(bridges: &[Vec<usize>], by_way_of: usize, smallest_allowed: 
     let small = |x: &[usize], y: &[usize]| x.len() + y.len() + 2 < smallest_allowed;
     let fits = |x: &[usize], y: &[usize]| apart(x, y) && small(x, y);
     bridges.iter().filter(|first| first[0] == by_way_of).any(|first| {
-        bridges.iter().enumerate().filter(|(_, second)| fits(first, second)).any(|(i, second)| {
-            bridges[i + 1..].iter().any(|third| fits(first, third) && fits(second, third))
-        })
+        bridges
+            .iter()
+            .enumerate()
+            .filter(|(_, second)| fits(first, second))
+            .any(|(i, second)| bridges[i + 1..].iter().any(|third| fits(first, third) && fits(second, third)))
     })
 }
 
