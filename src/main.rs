@@ -1,2 +1,7 @@
-//! The command line; see `src/commands`.
-fn main() {}
+//! The program: arguments in, library calls, exit code out. See `src/commands`.
+
+mod commands;
+
+fn main() -> std::process::ExitCode {
+    commands::main()
+}

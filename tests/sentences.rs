@@ -161,7 +161,7 @@ impl Walk<'_> {
                 self.sentence.extend(char::from_u32(from + offset as u32));
             }
             TerminalValues::Concatenation(codes) => {
-                self.sentence.extend(codes.iter().filter_map(|&c| char::from_u32(c)))
+                self.sentence.extend(codes.iter().filter_map(|&c| char::from_u32(c)));
             }
         }
     }

@@ -11,8 +11,8 @@
 //! compounds cost no more than their skeletons.
 //!
 //! # Source
-//! B. D. McKay, Congressus Numerantium 30, 45 (1981), in its simplest form; refinement as in
-//! the colouring of H. L. Morgan, J. Chem. Doc. 5, 107 (1965).
+//! Brendan McKay, Congressus Numerantium 30, 45 (1981), in its simplest form; refinement as in
+//! the colouring of Morgan, J. Chem. Doc. 5, 107 (1965).
 
 use super::graph::{Geometry, Handedness, Ligand, Molecule};
 

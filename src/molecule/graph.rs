@@ -158,6 +158,9 @@ impl Molecule {
     }
 
     /// Both ends and the order of the bond with this index.
+    ///
+    /// # Panics
+    /// If there is no such bond.
     pub fn bond(&self, index: usize) -> (usize, usize, BondOrder) {
         let edge = EdgeIndex::new(index);
         let (a, b) = self.graph.edge_endpoints(edge).expect("bond index comes from this molecule");
@@ -275,6 +278,20 @@ impl Molecule {
         out
     }
 
+    /// Adds the atoms and bonds of another molecule behind this one's, configuration and all;
+    /// nothing joins the two.
+    pub fn append(&mut self, other: &Molecule) {
+        let n = self.n_atoms();
+        for atom in other.atoms() {
+            self.add_atom(atom);
+        }
+        for (a, b, order) in other.bonds() {
+            self.add_bond(n + a, n + b, order);
+        }
+        let place: Vec<usize> = (n..n + other.n_atoms()).collect();
+        self.copy_configuration(other, &place);
+    }
+
     /// Takes configuration over from a molecule whose atom `i` is this one's `place[i]`.
     fn copy_configuration(&mut self, from: &Molecule, place: &[usize]) {
         let moved = |ligand: Ligand| match ligand {
@@ -291,7 +308,9 @@ impl Molecule {
             let Some(geometry) = from.geometry(bond) else { continue };
             let (a, b, _) = from.bond(bond);
             let (Some(at_a), Some(at_b)) = (from.reference_ligand(a, b), from.reference_ligand(b, a)) else { continue };
-            self.set_geometry_between(bond, moved(at_a), moved(at_b), geometry);
+            if let Some(same) = self.bond_between(place[a], place[b]) {
+                self.set_geometry_between(same, moved(at_a), moved(at_b), geometry);
+            }
         }
     }
 
@@ -340,8 +359,8 @@ impl Molecule {
     }
 
     /// Whether an aromatic atom has a double bond in each Kekulé form (carbon always; nitrogen
-    /// and its kin with two ligands; oxygen and its kin never; an anion's lone pair takes its place).
-    pub fn takes_ring_double_bond(&self, atom: usize) -> bool {
+    /// and its kin with two ligands; oxygen and its kin never; a lone pair of an anion takes its place).
+    pub(crate) fn takes_ring_double_bond(&self, atom: usize) -> bool {
         let a = self.atom(atom);
         let n_ligands = self.degree(atom) + usize::from(a.n_hydrogens);
         let exocyclic_double = self.neighbours(atom).any(|(_, order, _)| order == BondOrder::Double);

@@ -70,6 +70,83 @@ fn grow(adjacency: &Adjacency, path: &mut Vec<usize>, rings: &mut Vec<[usize; 6]
     }
 }
 
+/// Sizes of the rings of a smallest set that makes all others, ascending.
+///
+/// # Source
+/// J. D. Horton, SIAM J. Comput. 16, 358 (1987): the shortest rings through each atom and bond,
+/// kept while they are independent.
+pub fn smallest_ring_sizes(adjacency: &Adjacency) -> Vec<usize> {
+    let bonds: Vec<(usize, usize)> =
+        (0..adjacency.len()).flat_map(|a| adjacency[a].iter().map(move |&b| (a, b))).filter(|(a, b)| a < b).collect();
+    let mut rings: Vec<Vec<usize>> = Vec::new();
+    for root in 0..adjacency.len() {
+        let parents = breadth_first_tree(adjacency, root);
+        for &(a, b) in &bonds {
+            rings.extend(ring_of(&parents, &bonds, root, a, b));
+        }
+    }
+    rings.sort_by_key(|ring| (ring.len(), ring.clone()));
+    let mut basis: Vec<Vec<bool>> = Vec::new();
+    let mut sizes = Vec::new();
+    for ring in rings {
+        let mut row = vec![false; bonds.len()];
+        for &bond in &ring {
+            row[bond] = true;
+        }
+        if add_if_independent(&mut basis, row) {
+            sizes.push(ring.len());
+        }
+    }
+    sizes
+}
+
+fn breadth_first_tree(adjacency: &Adjacency, root: usize) -> Vec<Option<usize>> {
+    let mut parents = vec![None; adjacency.len()];
+    let mut is_seen = vec![false; adjacency.len()];
+    is_seen[root] = true;
+    let mut queue = VecDeque::from([root]);
+    while let Some(x) = queue.pop_front() {
+        for &y in &adjacency[x] {
+            if !std::mem::replace(&mut is_seen[y], true) {
+                parents[y] = Some(x);
+                queue.push_back(y);
+            }
+        }
+    }
+    parents
+}
+
+/// The ring of a bond and the tree paths from its ends to the root, if they meet only there.
+fn ring_of(parents: &[Option<usize>], bonds: &[(usize, usize)], root: usize, a: usize, b: usize) -> Option<Vec<usize>> {
+    let path = |end: usize| std::iter::successors(Some(end), |&x| parents[x]).collect::<Vec<_>>();
+    let (of_a, of_b) = (path(a), path(b));
+    let apart = of_a.iter().filter(|x| **x != root).all(|x| !of_b.contains(x));
+    if of_a.last() != Some(&root) || of_b.last() != Some(&root) || !apart || of_a.contains(&b) || of_b.contains(&a) {
+        return None;
+    }
+    let index = |x: usize, y: usize| bonds.binary_search(&(x.min(y), x.max(y))).ok();
+    let mut ring: Vec<usize> =
+        [&of_a, &of_b].iter().flat_map(|p| p.windows(2)).filter_map(|w| index(w[0], w[1])).collect();
+    ring.extend(index(a, b));
+    ring.sort_unstable();
+    Some(ring)
+}
+
+/// Adds a row to a basis over GF(2) in echelon form; false if it was in the span.
+fn add_if_independent(basis: &mut Vec<Vec<bool>>, mut row: Vec<bool>) -> bool {
+    for known in basis.iter() {
+        let lead = known.iter().position(|&x| x);
+        if lead.is_some_and(|lead| row[lead]) {
+            row.iter_mut().zip(known).for_each(|(x, y)| *x ^= y);
+        }
+    }
+    let is_new = row.contains(&true);
+    if is_new {
+        basis.push(row);
+    }
+    is_new
+}
+
 /// Whether each bond `a`–`b` may not become double by Bredt's rule, asked for the end `a`.
 ///
 /// True when some bridgehead partner `c` of `a` is joined to it by three separate bridges of
@@ -144,6 +221,7 @@ mod tests {
         assert!(is_strained_bridgehead(&norbornane, 0, 1, 8));
         assert!(is_strained_bridgehead(&norbornane, 0, 6, 8));
         assert!(!is_strained_bridgehead(&norbornane, 1, 2, 8));
+        assert_eq!(smallest_ring_sizes(&norbornane), [5, 5]);
     }
 
     #[test]
@@ -160,6 +238,7 @@ mod tests {
         assert!(!is_strained_bridgehead(&decalin, 4, 5, 8));
         assert!(!is_strained_bridgehead(&decalin, 4, 3, 8));
         assert_eq!(six_rings(&decalin).len(), 2);
+        assert_eq!(smallest_ring_sizes(&decalin), [6, 6]);
         assert_eq!(smallest_ring_through_bond(&decalin, 4, 5), Some(6));
         assert_eq!(smallest_ring_through_bend(&decalin, 3, 4, 6), Some(10));
     }

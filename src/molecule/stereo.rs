@@ -4,15 +4,23 @@
 //! single-bonded ligands, no two of them hydrogens or halogens of one kind; or a C=C in no ring
 //! of fewer than eight atoms, not cumulated, with the same said of each end. Whether two
 //! branches are alike is not asked of a candidate. It is asked once for all by the canonical
-//! form: a unit is *real* when reversing it gives another compound.
+//! form: units are *idle* when every setting of them gives one compound, and those are
+//! forgotten. Units that a relabelling could exchange are forgotten together or not at all: of
+//! the three centres of cis,cis,trans-1,3,5-trimethylcyclohexane each of two can be reversed and
+//! give the same compound again, but not both, so all three are kept.
 
-use super::canonical::canonical_code;
+use std::collections::BTreeMap;
+
+use super::canonical::{Code, canonical_code};
 use super::element::Element;
 use super::graph::{BondOrder, Geometry, Handedness, Molecule};
 use super::rings::{Adjacency, smallest_ring_through_bond};
 
 /// Smallest ring in which a double bond may have either geometry.
 pub const SMALLEST_RING_WITH_GEOMETRY: usize = 8;
+
+/// Most units whose settings are tried together before they are kept untried.
+const MOST_IDLE_UNITS: usize = 8;
 
 /// How much configuration tells compounds apart.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Default)]
@@ -33,6 +41,16 @@ pub enum Unit {
     Centre(usize),
     /// A double bond, by index.
     DoubleBond(usize),
+}
+
+impl Unit {
+    /// Whether compounds that differ in this unit alone are told apart.
+    pub fn is_told_by(self, identity: Identity) -> bool {
+        match self {
+            Unit::Centre(_) => identity == Identity::Full,
+            Unit::DoubleBond(_) => identity >= Identity::Geometric,
+        }
+    }
 }
 
 impl Molecule {
@@ -78,23 +96,26 @@ impl Molecule {
     fn has_twin_ligands(&self, atom: usize, besides: Option<usize>) -> bool {
         let mut seen = [0u8; 4];
         for (n, _, _) in self.neighbours(atom) {
-            if Some(n) != besides {
-                if let Some(halogen) = self.leaving_halogen(n) {
-                    seen[halogen as usize] += 1;
-                }
+            if Some(n) != besides
+                && let Some(halogen) = self.leaving_halogen(n)
+            {
+                seen[halogen as usize] += 1;
             }
         }
         self.atom(atom).n_hydrogens > 1 || seen.iter().any(|&n| n > 1)
     }
 
-    fn is_given(&self, unit: Unit) -> bool {
+    /// Whether a unit carries a setting.
+    pub fn is_given(&self, unit: Unit) -> bool {
         match unit {
             Unit::Centre(atom) => self.handedness(atom).is_some(),
             Unit::DoubleBond(bond) => self.geometry(bond).is_some(),
         }
     }
 
-    fn set_unit(&mut self, unit: Unit, first: bool) {
+    /// Gives a unit the first of its two settings, or the second: which is which means nothing
+    /// but that they differ.
+    pub fn set_unit(&mut self, unit: Unit, first: bool) {
         match unit {
             Unit::Centre(atom) => {
                 let value = if first { Handedness::Anticlockwise } else { Handedness::Clockwise };
@@ -130,6 +151,12 @@ impl Molecule {
     /// and where reversing it changes nothing.
     pub fn keep_real_units(&mut self, identity: Identity) {
         let candidates = self.candidate_units();
+        self.clear_all_but(&candidates, identity);
+        self.drop_idle_units(&candidates);
+    }
+
+    /// Forgets configuration at all units but these, and where the identity does not tell it.
+    pub fn clear_all_but(&mut self, candidates: &[Unit], identity: Identity) {
         for atom in 0..self.n_atoms() {
             if identity < Identity::Full || !candidates.contains(&Unit::Centre(atom)) {
                 self.set_handedness(atom, None);
@@ -140,22 +167,27 @@ impl Molecule {
                 self.set_geometry(bond, None);
             }
         }
-        self.drop_idle_units(&candidates);
     }
 
-    /// Forgets, one at a time, each given unit whose two settings give one compound whatever
-    /// the units forgotten before it are set to.
+    /// Forgets the given units that tell nothing, a class of alike ones at a time.
     fn drop_idle_units(&mut self, candidates: &[Unit]) {
+        let given: Vec<Unit> = candidates.iter().copied().filter(|&u| self.is_given(u)).collect();
+        if given.is_empty() {
+            return;
+        }
         let classes = super::canonical::refined_classes(self);
-        let mut idle: Vec<Unit> = Vec::new();
-        for &unit in candidates.iter().filter(|&&u| self.is_given(u)).collect::<Vec<_>>() {
-            if self.is_plainly_real(unit, &classes) || idle.len() >= 8 {
-                continue;
+        let code = canonical_code(self);
+        let mut alike: BTreeMap<(usize, usize), Vec<Unit>> = BTreeMap::new();
+        for unit in given.into_iter().filter(|&u| !self.is_plainly_real(u, &classes)) {
+            if self.settings_agree(&[unit], &code) {
+                alike.entry(self.class_of(unit, &classes)).or_default().push(unit);
             }
-            let mut probe = idle.clone();
-            probe.push(unit);
-            if self.settings_agree(&probe) {
-                idle.push(unit);
+        }
+        let mut idle: Vec<Unit> = Vec::new();
+        for class in alike.into_values() {
+            let both = [idle.as_slice(), &class].concat();
+            if both.len() <= MOST_IDLE_UNITS && self.settings_agree(&both, &code) {
+                idle = both;
             }
         }
         for unit in idle {
@@ -163,16 +195,24 @@ impl Molecule {
         }
     }
 
-    /// Whether all settings of these units, the others kept, give one compound.
-    fn settings_agree(&self, units: &[Unit]) -> bool {
-        let code = canonical_code(self);
+    fn class_of(&self, unit: Unit, classes: &[usize]) -> (usize, usize) {
+        match unit {
+            Unit::Centre(atom) => (classes[atom], usize::MAX),
+            Unit::DoubleBond(bond) => {
+                let (a, b, _) = self.bond(bond);
+                (classes[a].min(classes[b]), classes[a].max(classes[b]))
+            }
+        }
+    }
+
+    /// Whether all settings of these units, the others kept, give the compound with this code.
+    fn settings_agree(&self, units: &[Unit], code: &Code) -> bool {
         (1..1u32 << units.len()).all(|mask| {
             let mut other = self.clone();
-            for (i, &unit) in units.iter().enumerate().filter(|(i, _)| mask >> i & 1 == 1) {
-                let _ = i;
+            for (_, &unit) in units.iter().enumerate().filter(|(i, _)| mask >> i & 1 == 1) {
                 other.reverse_unit(unit);
             }
-            canonical_code(&other) == code
+            canonical_code(&other) == *code
         })
     }
 
@@ -216,7 +256,7 @@ impl Molecule {
         if open.len() >= 24 || n_settings > most {
             return Err(n_settings);
         }
-        let mut found = std::collections::BTreeMap::new();
+        let mut found = BTreeMap::new();
         for mask in 0..n_settings {
             let mut isomer = plain.clone();
             for (i, &unit) in open.iter().enumerate() {

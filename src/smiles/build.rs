@@ -16,7 +16,8 @@ use super::{aromatic, valence};
 /// Reads a compound.
 ///
 /// Hydrogens are counts on their atoms, also those written as `[H]`. Aromatic six-rings are
-/// perceived, so that `C1=CC=CC=C1` and `c1ccccc1` are one compound. Configuration is kept
+/// perceived, so that `C1=CC=CC=C1` and `c1ccccc1` are one compound, and `N(=O)=O` is read as
+/// `[N+](=O)[O-]`. Configuration is kept
 /// where the text gives it and a place may have it, whether or not it turns out to tell
 /// compounds apart ([`Molecule::keep_real_units`] asks that).
 ///
@@ -46,6 +47,7 @@ pub fn read(text: &str) -> Result<Molecule, ReadError> {
     aromatic::release_bridges(&mut molecule);
     check_aromatic_atoms(&molecule, &text_of)?;
     imply_hydrogens(&mut molecule, &text_of)?;
+    split_nitro_groups(&mut molecule);
     check_valences(&molecule, &text_of)?;
     check_alternation(&molecule, &text_of)?;
     aromatic::release_links(&mut molecule);
@@ -143,6 +145,28 @@ fn imply_hydrogens(molecule: &mut Molecule, text_of: &[&AtomText]) -> Result<(),
         molecule.atom_mut(atom).n_hydrogens = n_hydrogens;
     }
     Ok(())
+}
+
+/// Gives N(=O)=O its charges, so that a nitro group has one form.
+fn split_nitro_groups(molecule: &mut Molecule) {
+    for nitrogen in 0..molecule.n_atoms() {
+        let Atom { element, charge, .. } = molecule.atom(nitrogen);
+        if element != Element::N || charge != 0 || molecule.valence_used(nitrogen) != 5 {
+            continue;
+        }
+        let is_bare_oxygen =
+            |atom: usize| molecule.atom(atom) == Atom::neutral(Element::O, 0) && molecule.degree(atom) == 1;
+        let oxygens: Vec<(usize, usize)> = molecule
+            .neighbours(nitrogen)
+            .filter(|&(n, order, _)| order == BondOrder::Double && is_bare_oxygen(n))
+            .map(|(n, _, bond)| (n, bond))
+            .collect();
+        if let [(oxygen, bond), _] = oxygens[..] {
+            molecule.set_order(bond, BondOrder::Single);
+            molecule.atom_mut(oxygen).charge = -1;
+            molecule.atom_mut(nitrogen).charge = 1;
+        }
+    }
 }
 
 fn check_valences(molecule: &Molecule, text_of: &[&AtomText]) -> Result<(), ReadError> {

@@ -23,8 +23,8 @@ pub(super) fn configure(molecule: &mut Molecule, sketch: &Sketch, place: &[Optio
     let view = View { sketch, place };
     view.check_marks()?;
     let candidates = molecule.candidate_units();
-    for atom in 0..sketch.atoms.len() {
-        if let (Some(handedness), Some(centre)) = (view.chirality(atom), place[atom]) {
+    for (atom, &centre) in place.iter().enumerate() {
+        if let (Some(handedness), Some(centre)) = (view.chirality(atom), centre) {
             view.check_centre(molecule, atom)?;
             if candidates.binary_search(&Unit::Centre(centre)).is_ok() {
                 molecule.set_handedness_in(centre, &view.ligands(atom), handedness.value);
@@ -103,28 +103,33 @@ impl View<'_> {
         })
     }
 
-    /// Whether an atom is a double-bonded carbon, whose two other ligands stand on two sides.
-    fn is_planar(&self, atom: usize) -> bool {
-        let is_double = |bond: &SketchBond| bond.symbol.as_ref().is_some_and(|s| s.value == BondSymbol::Double);
-        let is_carbon = self.sketch.atoms[atom].text.symbol == Symbol::Element(Element::C);
-        is_carbon && self.sketch.bonds_of(atom).any(is_double)
-    }
-
+    /// Refuses two marks on one side of an end. Asked only where both ends of a double bond are
+    /// marked: marks that serve the next double bonds alone may agree, as in
+    /// `C=C(/C=C/Cl)/C=C/Cl`.
     fn check_marks(&self) -> Result<(), ReadError> {
-        for atom in 0..self.sketch.atoms.len() {
-            if !self.is_planar(atom) {
-                continue;
-            }
-            let marks: Vec<(bool, &SketchBond)> =
-                self.sketch.bonds_of(atom).filter_map(|bond| Some((is_above(atom, bond)?, bond))).collect();
-            if let [(first, _), (second, bond), ..] = marks[..] {
-                if first == second {
-                    let span = bond.symbol.as_ref().map_or(0..0, |symbol| symbol.span.clone());
-                    return Err(ReadError { kind: ReadErrorKind::ContradictoryMarks, span });
-                }
+        for bond in self.sketch.bonds.iter().filter(|bond| self.is_carbon_double(bond)) {
+            if self.marked(bond.from).is_some() && self.marked(bond.to).is_some() {
+                self.check_sides(bond.from)?;
+                self.check_sides(bond.to)?;
             }
         }
         Ok(())
+    }
+
+    fn is_carbon_double(&self, bond: &SketchBond) -> bool {
+        let is_carbon = |atom: usize| self.sketch.atoms[atom].text.symbol == Symbol::Element(Element::C);
+        let is_double = bond.symbol.as_ref().is_some_and(|symbol| symbol.value == BondSymbol::Double);
+        is_double && is_carbon(bond.from) && is_carbon(bond.to)
+    }
+
+    fn check_sides(&self, end: usize) -> Result<(), ReadError> {
+        let mut marks = self.sketch.bonds_of(end).filter_map(|bond| Some((is_above(end, bond)?, bond)));
+        let (Some((first, _)), Some((second, bond))) = (marks.next(), marks.next()) else { return Ok(()) };
+        if first != second {
+            return Ok(());
+        }
+        let span = bond.symbol.as_ref().map_or(0..0, |symbol| symbol.span.clone());
+        Err(ReadError { kind: ReadErrorKind::ContradictoryMarks, span })
     }
 }
 

@@ -120,9 +120,8 @@ impl ReadError {
             Kind::TooLong { .. } => "from here on",
             Kind::TooDeep | Kind::OpenBranch | Kind::EmptyBranch => "this branch",
             Kind::UnexpectedCharacter { .. } => "this character",
-            Kind::DanglingBond | Kind::QuadrupleBond => "this bond",
+            Kind::DanglingBond | Kind::QuadrupleBond | Kind::AromaticBond => "this bond",
             Kind::OpenBracket => "opened here",
-            Kind::UnopenedBranch => "closed here",
             Kind::MisplacedRingNumber | Kind::ShortRingNumber | Kind::OpenRing { .. } => "this ring number",
             Kind::Isotope => "this mass number",
             Kind::SeveralComponents => "the second component begins here",
@@ -132,11 +131,13 @@ impl ReadError {
             Kind::UnsupportedElement { .. } | Kind::UnknownElement { .. } | Kind::NeedsBrackets { .. } => {
                 "this element"
             }
-            Kind::RingToItself { .. } | Kind::BondedTwice { .. } | Kind::RingBondsDisagree { .. } => "closed here",
+            Kind::UnopenedBranch
+            | Kind::RingToItself { .. }
+            | Kind::BondedTwice { .. }
+            | Kind::RingBondsDisagree { .. } => "closed here",
             Kind::TooManyBonds { element, .. } | Kind::TooFewBonds { element, .. } | Kind::Charge { element, .. } => {
                 this(element)
             }
-            Kind::AromaticBond => "this bond",
             Kind::AromaticOutsideRing { element } => this(element),
             Kind::NotAlternating { .. } => "no double bond is left for this atom",
             Kind::ContradictoryMarks => "this mark is against the other",

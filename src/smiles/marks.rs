@@ -130,22 +130,16 @@ impl<'a> Puzzle<'a> {
     }
 
     fn options(&self, end: usize, preference: Preference) -> Vec<usize> {
-        let mut options: Vec<(u8, usize, usize)> = self
-            .carriers(end)
-            .map(|(carrier, ligand)| match ligand {
-                Ligand::Hydrogen if preference == Preference::Apart => (1, 0, carrier),
-                Ligand::Hydrogen => (3, 0, carrier),
-                Ligand::Neighbour(n) if !self.planar.contains(&n) => {
-                    (u8::from(preference == Preference::Shared), self.position[n], carrier)
-                }
-                Ligand::Neighbour(n) if self.ends.contains(&n) => {
-                    (2 * u8::from(preference == Preference::Apart), self.position[n], carrier)
-                }
-                Ligand::Neighbour(n) => (2, self.position[n], carrier),
-            })
-            .collect();
+        let rank = |ligand: Ligand| match (ligand, preference) {
+            (Ligand::Neighbour(n), Preference::Shared) => (u8::from(!self.ends.contains(&n)), self.position[n]),
+            (Ligand::Neighbour(n), Preference::Apart) => (2 * u8::from(self.planar.contains(&n)), self.position[n]),
+            (Ligand::Hydrogen, Preference::Shared) => (2, 0),
+            (Ligand::Hydrogen, Preference::Apart) => (1, 0),
+        };
+        let mut options: Vec<((u8, usize), usize)> =
+            self.carriers(end).map(|(carrier, ligand)| (rank(ligand), carrier)).collect();
         options.sort_unstable();
-        options.into_iter().map(|(_, _, carrier)| carrier).collect()
+        options.into_iter().map(|(_, carrier)| carrier).collect()
     }
 
     /// Whether marks give geometry to a double bond that has none.
@@ -218,14 +212,12 @@ impl<'a> Puzzle<'a> {
     }
 
     fn written_at(&self, carrier: usize) -> (usize, usize) {
-        match carrier.checked_sub(self.molecule.n_bonds()) {
-            Some(atom) => (self.position[atom], usize::MAX),
-            None => {
-                let (a, b) = ends_of(self.molecule, carrier);
-                let (a, b) = (self.position[a], self.position[b]);
-                (a.max(b), a.min(b))
-            }
+        if let Some(atom) = carrier.checked_sub(self.molecule.n_bonds()) {
+            return (self.position[atom], usize::MAX);
         }
+        let (a, b) = ends_of(self.molecule, carrier);
+        let (a, b) = (self.position[a], self.position[b]);
+        (a.max(b), a.min(b))
     }
 }
 

@@ -62,7 +62,7 @@ pub fn parse(text: &str) -> Result<SmilesText, ReadError> {
         return Err(ReadError { kind: ReadErrorKind::EmptyText, span: 0..0 });
     }
     if text.len() > LONGEST_TEXT {
-        let end = text.floor_char_boundary(LONGEST_TEXT);
+        let end = (0..=LONGEST_TEXT).rfind(|&end| text.is_char_boundary(end)).unwrap_or(0);
         return Err(ReadError { kind: ReadErrorKind::TooLong { length: text.len() }, span: end..text.len() });
     }
     match (Source { text }).smiles(text) {
@@ -345,7 +345,7 @@ fn charge(input: &str) -> Parsed<'_, i8> {
 
 fn nonzero(input: &str) -> Parsed<'_, i8> {
     let (rest, digit) = one_of("123456789").parse(input)?;
-    Ok((rest, digit as i8 - b'0' as i8))
+    Ok((rest, digit.to_digit(10).map_or(0, |n| n as i8)))
 }
 
 fn digit(input: &str) -> Parsed<'_, u8> {

@@ -72,11 +72,8 @@ fn sound_valences(element: Element, charge: i8) -> &'static [u32] {
         Element::Cl | Element::Br | Element::I => (7, false),
     };
     match (electrons - charge, holds_octet) {
-        (3, _) => &[3],
+        (3, _) | (5, true) => &[3],
         (4, _) => &[4],
-        // Five bonds at an uncharged nitrogen are the usual way to write a nitro group.
-        (5, true) if charge == 0 => &[3, 5],
-        (5, true) => &[3],
         (5, false) => &[3, 5],
         (6, true) => &[2],
         (6, false) => &[2, 4, 6],

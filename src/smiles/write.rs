@@ -66,7 +66,7 @@ impl Route {
             starts: Vec::new(),
         };
         let mut order: Vec<usize> = (0..n).collect();
-        order.sort_by_key(|&atom| (molecule.degree(atom) > 1, molecule.atom(atom).element != Element::C, atom));
+        order.sort_by_key(|&atom| (molecule.degree(atom) > 1, atom));
         let mut seen = vec![false; n];
         for start in order {
             if !seen[start] {
@@ -104,7 +104,7 @@ impl Route {
         visited
     }
 
-    /// Small branches first, and of equal ones the multiply bonded.
+    /// Small branches first.
     fn sort_children(&mut self, molecule: &Molecule, visited: &[usize]) {
         let mut size = vec![1usize; molecule.n_atoms()];
         for &atom in visited.iter().rev() {
@@ -113,7 +113,7 @@ impl Route {
             }
         }
         for &atom in visited {
-            self.children[atom].sort_by_key(|&child| (size[child], is_single(molecule, atom, child), child));
+            self.children[atom].sort_by_key(|&child| (size[child], child));
         }
     }
 
@@ -132,19 +132,11 @@ impl Route {
     }
 }
 
-/// Neighbours to go to, the first last; multiple bonds first, so that rings close by single ones.
+/// Neighbours to go to, the first last.
 fn ways_from(molecule: &Molecule, atom: usize) -> Vec<usize> {
     let mut ways: Vec<usize> = molecule.neighbours(atom).map(|(n, _, _)| n).collect();
-    ways.sort_by_key(|&n| std::cmp::Reverse((is_single(molecule, atom, n), n)));
+    ways.sort_unstable_by_key(|&n| std::cmp::Reverse(n));
     ways
-}
-
-fn is_single(molecule: &Molecule, a: usize, b: usize) -> bool {
-    order_between(molecule, a, b) == BondOrder::Single
-}
-
-fn order_between(molecule: &Molecule, a: usize, b: usize) -> BondOrder {
-    molecule.bond_between(a, b).map_or(BondOrder::Single, |bond| molecule.bond(bond).2)
 }
 
 /// What is still to be written.

@@ -105,6 +105,8 @@ fn valences_that_cannot_be() {
     check("CClC", " ^^", "chlorine has 2 bonds", one);
     check("C=F", "  ^", "fluorine has 2 bonds", one);
     check("O(C)(C)C", "^", "oxygen has 3 bonds", "oxygen takes two bonds, or three as [O+]; was a bracket atom meant?");
+    let nitrogen = "nitrogen takes three bonds, or four as [N+]; was a bracket atom meant?";
+    check("CN=N#N", "   ^", "nitrogen has 5 bonds", nitrogen);
     check("[CH5]", "^^^^^", "carbon has 5 bonds", four);
     check("[NH5+]", "^^^^^^", "nitrogen has 5 bonds", "check the charge and the hydrogens written in the brackets");
     let written = "hydrogens of an atom in brackets are written out, as in [CH3]";

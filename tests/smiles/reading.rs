@@ -27,6 +27,7 @@ fn hydrogens_are_implied_by_the_normal_valences() {
         ("C#C", "C2H2"),
         ("O", "H2O"),
         ("N(=O)(=O)c1ccccc1", "C6H5NO2"),
+        ("CN=[N+]=[N-]", "CH3N3"),
         ("CS(=O)(=O)Cl", "CH3ClO2S"),
         ("CP(Cl)(Cl)(Cl)Cl", "CH3Cl4P"),
         ("COP(=O)(OC)OC=C(Cl)Cl", "C4H7Cl2O4P"),
@@ -66,6 +67,7 @@ fn one_compound_has_many_texts() {
     same("C1C=CC=CC=1Cl", "Clc1ccccc1");
     same("c1ccccc1c2ccccc2", "c1ccccc1-c1ccccc1");
     same("c1ccc:c:c1", "c1ccccc1");
+    same("N(=O)(=O)C(Cl)(Cl)Cl", "O=[N+]([O-])C(Cl)(Cl)Cl");
     same("C1=CC=C2C=CC=CC2=C1", "c1ccc2ccccc2c1");
     same("C1=CC2=CC=CC=C2C=C1", "C1=CC=C2C=CC=CC2=C1");
     same("C1=CC2=C(C=C1)OC1=CC=CC=C12", "c1ccc2c(c1)oc1ccccc12");
@@ -88,6 +90,7 @@ fn geometry_is_read_from_either_side() {
     same("C/1(Cl)=C(Cl)/CCCCCCCCC1", r"C1(/Cl)=C(Cl)\CCCCCCCCC1");
     same(r"C1=C/CCCCCC/1", r"C\1=C/CCCCCC1");
     same("C1CCCC=CC1", r"C1CCC/C=C\C1");
+    same("C=C(/C=C/Cl)/C=C/Cl", r"C=C(/C=C/Cl)\C=C\Cl");
     let dichloride = read("Cl/C=C/Cl").unwrap();
     assert_eq!(geometries(&dichloride), [Geometry::Trans]);
 }
@@ -96,6 +99,7 @@ fn geometry_is_read_from_either_side() {
 fn marks_where_there_is_no_geometry_are_dropped() {
     for (text, plain) in [
         ("C/C", "CC"),
+        ("C=C(/C)/C", "C=C(C)C"),
         ("C/C=C", "CC=C"),
         (r"C/C=C(\C)/C", "CC=C(C)C"),
         ("C/C=N/O", "CC=NO"),

@@ -1,0 +1,196 @@
+//! From the stored network to records, one by one.
+//!
+//! Texts and masses are made from a compound's molecule when it is asked for. Names and
+//! energies are asked of those who know them, through two small traits. What a step consumes
+//! and releases follows from the formulas at its two ends: halogens, oxygen, hydrogen and
+//! charge balance in one way only, as rules bring in nothing but water, protons and electrons.
+
+use std::borrow::Cow;
+
+use super::Records;
+use super::record::{ByHalogen, Caution, Compound, GibbsOrigin, Header, Step};
+use crate::molecule::condensed::condensed;
+use crate::molecule::{Element, Molecule};
+use crate::network::{self, CompoundId, Network};
+use crate::rules::Rule;
+use crate::smiles;
+
+/// What is known of a compound by name.
+#[derive(Debug, Clone, Default, PartialEq, Eq)]
+pub struct Entry {
+    /// Names, the systematic one first.
+    pub names: Vec<String>,
+    /// Abbreviations in use at sites.
+    pub abbreviations: Vec<String>,
+    /// CAS registry number.
+    pub cas: Option<String>,
+    /// Well-known dangers.
+    pub cautions: Vec<Caution>,
+}
+
+/// Knows compounds by name.
+pub trait Registry {
+    /// What is known of a compound with this canonical SMILES.
+    fn entry(&self, smiles: &str, molecule: &Molecule) -> Entry;
+}
+
+/// Gibbs energy of a compound, as in [`Compound`].
+#[derive(Debug, Clone, PartialEq)]
+#[allow(missing_docs, reason = "the fields of `Compound` of the same names say it")]
+pub struct CompoundEnergy {
+    pub gibbs_aq_kj_per_mol: Option<f64>,
+    pub gibbs_sd_kj_per_mol: Option<f64>,
+    pub gibbs_origin: GibbsOrigin,
+    pub gibbs_source: String,
+}
+
+/// Potential of a step, as in [`Step`].
+#[derive(Debug, Clone, Default, PartialEq)]
+#[allow(missing_docs, reason = "the fields of `Step` of the same names say it")]
+pub struct StepEnergy {
+    pub e_standard_volt: Option<f64>,
+    pub e_volt: Option<f64>,
+    pub e_sd_volt: Option<f64>,
+    pub e_missing: Option<String>,
+    pub gibbs_step_kj_per_mol: Option<f64>,
+    pub gibbs_step_sd_kj_per_mol: Option<f64>,
+}
+
+/// Knows the energies of a network.
+pub trait Energies {
+    /// The energy of a compound.
+    fn compound(&self, compound: CompoundId) -> CompoundEnergy;
+
+    /// The energy of a step.
+    fn step(&self, step: &network::Step, reagents: &Reagents) -> StepEnergy;
+}
+
+/// What a step consumes and releases.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Reagents {
+    /// Molecules of the starting compound.
+    pub molecules: u32,
+    /// Electrons consumed.
+    pub electrons: i32,
+    /// Protons consumed; negative when given off.
+    pub protons: i32,
+    /// Water consumed; negative when given off.
+    pub water: i32,
+    /// Halide ions released.
+    pub released: ByHalogen<u32>,
+}
+
+impl Reagents {
+    /// The reagents of a step from `molecules` of one compound to one of another.
+    pub fn between(from: &Molecule, to: &Molecule, molecules: u32) -> Reagents {
+        let n = molecules.cast_signed();
+        let (before, after) = (from.formula(), to.formula());
+        let gained = |of: fn(&crate::molecule::Formula) -> i32| of(&after) - n * of(&before);
+        let (a, b) = (halogens(from), halogens(to));
+        let lost = |a: u32, b: u32| (a * molecules).saturating_sub(b);
+        let released = ByHalogen {
+            fluorine: lost(a.fluorine, b.fluorine),
+            chlorine: lost(a.chlorine, b.chlorine),
+            bromine: lost(a.bromine, b.bromine),
+            iodine: lost(a.iodine, b.iodine),
+        };
+        let n_released: u32 = released.pairs().iter().map(|&(_, n)| n).sum();
+        let water = gained(|f| f.count(Element::O).cast_signed());
+        let protons = gained(|f| f.n_hydrogens().cast_signed()) - 2 * water;
+        let electrons = protons + n_released.cast_signed() - gained(crate::molecule::Formula::charge);
+        Reagents { molecules, electrons, protons, water, released }
+    }
+}
+
+fn halogens(molecule: &Molecule) -> ByHalogen<u32> {
+    let [fluorine, chlorine, bromine, iodine] = molecule.halogens();
+    ByHalogen { fluorine, chlorine, bromine, iodine }
+}
+
+/// A network that makes its records when asked.
+pub struct Assembled<'a> {
+    /// What holds for the whole network.
+    pub header: Header,
+    /// The network.
+    pub network: &'a Network,
+    /// The rules it was made by, in the order of its rule numbers.
+    pub rules: &'a [Rule],
+    /// Who knows names.
+    pub registry: &'a dyn Registry,
+    /// Who knows energies.
+    pub energies: &'a dyn Energies,
+}
+
+impl Records for Assembled<'_> {
+    fn header(&self) -> &Header {
+        &self.header
+    }
+
+    fn compounds(&self) -> Box<dyn Iterator<Item = Cow<'_, Compound>> + '_> {
+        Box::new((0..self.network.n_compounds() as CompoundId).map(|id| Cow::Owned(self.compound(id))))
+    }
+
+    fn steps(&self) -> Box<dyn Iterator<Item = Cow<'_, Step>> + '_> {
+        let all = 0..self.network.n_compounds() as CompoundId;
+        Box::new(all.flat_map(move |from| {
+            // Made once for all steps of a compound.
+            let molecule = self.network.molecule(from);
+            self.network.steps_from(from).map(move |step| Cow::Owned(self.step(&step, &molecule)))
+        }))
+    }
+}
+
+impl Assembled<'_> {
+    fn compound(&self, id: CompoundId) -> Compound {
+        let molecule = self.network.molecule(id);
+        let smiles = smiles::write(&molecule);
+        let Entry { names, abbreviations, cas, cautions } = self.registry.entry(&smiles, &molecule);
+        let energy = self.energies.compound(id);
+        let formula = molecule.formula();
+        Compound {
+            id: id + 1,
+            formula: formula.to_string(),
+            condensed: condensed(&molecule).unwrap_or_else(|| smiles.clone()),
+            smiles,
+            names,
+            abbreviations,
+            cas,
+            generation: self.network.generation_of(id) as u32,
+            is_parent: self.network.parents().contains(&id),
+            is_end_product: self.network.is_expanded(id) && self.network.steps_from(id).len() == 0,
+            transient: (0..molecule.n_atoms()).any(|atom| molecule.is_carbene(atom)),
+            halogens: halogens(&molecule),
+            molar_mass_g_per_mol: formula.molar_mass_g_per_mol(),
+            monoisotopic_mass_u: formula.monoisotopic_mass_u(),
+            gibbs_aq_kj_per_mol: energy.gibbs_aq_kj_per_mol,
+            gibbs_sd_kj_per_mol: energy.gibbs_sd_kj_per_mol,
+            gibbs_origin: energy.gibbs_origin,
+            gibbs_source: energy.gibbs_source,
+            cautions,
+        }
+    }
+
+    fn step(&self, step: &network::Step, from: &Molecule) -> Step {
+        let rule = &self.rules[step.rule];
+        let reagents = Reagents::between(from, &self.network.molecule(step.to), u32::from(rule.copies));
+        let energy = self.energies.step(step, &reagents);
+        Step {
+            id: step.index as u32 + 1,
+            from: step.from + 1,
+            to: step.to + 1,
+            rule: rule.name.clone(),
+            degeneracy: step.degeneracy.to_f64(),
+            molecules: reagents.molecules,
+            electrons: reagents.electrons,
+            protons: reagents.protons,
+            water: reagents.water,
+            released: reagents.released,
+            e_standard_volt: energy.e_standard_volt,
+            e_volt: energy.e_volt,
+            e_sd_volt: energy.e_sd_volt,
+            e_missing: energy.e_missing,
+            gibbs_step_kj_per_mol: energy.gibbs_step_kj_per_mol,
+            gibbs_step_sd_kj_per_mol: energy.gibbs_step_sd_kj_per_mol,
+        }
+    }
+}

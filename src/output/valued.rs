@@ -1,0 +1,172 @@
+//! Energies of a network's compounds and steps as records want them.
+
+use super::assemble::{CompoundEnergy, Energies, Reagents, StepEnergy};
+use super::explain::{Contribution, Explanation, Part};
+use super::record::GibbsOrigin;
+use crate::network::{CompoundId, HalfReaction, Network, Step};
+use crate::smiles;
+use crate::thermo::data::Quantity;
+use crate::thermo::{self, Conditions, Node, Origin, Scheme, features, parts, potential};
+
+/// A network with the energies of its compounds, at some conditions.
+pub struct Valued<'a> {
+    /// The network.
+    pub network: &'a Network,
+    /// Energies of its compounds.
+    pub energies: &'a thermo::Energies,
+    /// The scheme they come from.
+    pub scheme: &'a Scheme,
+    /// Conditions of E' and of the Gibbs energies of steps.
+    pub conditions: Conditions,
+}
+
+impl Energies for Valued<'_> {
+    fn compound(&self, compound: CompoundId) -> CompoundEnergy {
+        let node = Node::of(self.network, self.energies, self.scheme, compound);
+        match self.energies.gibbs_kj_per_mol(compound) {
+            Some(gibbs) => CompoundEnergy {
+                gibbs_aq_kj_per_mol: Some(gibbs),
+                gibbs_sd_kj_per_mol: Some(node.sd_kj_per_mol(self.scheme)),
+                gibbs_origin: origin(&node),
+                gibbs_source: source(&node),
+            },
+            None => CompoundEnergy {
+                gibbs_aq_kj_per_mol: None,
+                gibbs_sd_kj_per_mol: None,
+                gibbs_origin: GibbsOrigin::None,
+                gibbs_source: self.why_missing(compound),
+            },
+        }
+    }
+
+    fn step(&self, step: &Step, reagents: &Reagents) -> StepEnergy {
+        let released = reagents.released.pairs().map(|(_, n)| n.cast_signed());
+        let reaction = HalfReaction {
+            n_reactants: reagents.molecules,
+            electrons: reagents.electrons,
+            protons: reagents.protons,
+            water: reagents.water,
+            released,
+        };
+        let ends = (step.from, step.to);
+        match potential(self.network, self.energies, self.scheme, &self.conditions, ends, &reaction) {
+            Err(missing) => StepEnergy { e_missing: Some(missing.to_string()), ..StepEnergy::default() },
+            Ok(found) => StepEnergy {
+                e_standard_volt: found.volts.map(|v| v.standard),
+                e_volt: found.volts.map(|v| v.at_conditions),
+                e_sd_volt: found.volts.map(|v| v.sd),
+                e_missing: found.volts.is_none().then(|| "no electron is transferred".to_owned()),
+                gibbs_step_kj_per_mol: Some(found.gibbs_kj_per_mol),
+                gibbs_step_sd_kj_per_mol: Some(found.gibbs_sd_kj_per_mol),
+            },
+        }
+    }
+}
+
+impl Valued<'_> {
+    fn why_missing(&self, compound: CompoundId) -> String {
+        let words = parts::in_words(&self.network.state(compound).0.frame);
+        format!(
+            "the scheme has no values for groups with {words}; steps that leave them alone are estimated by difference"
+        )
+    }
+
+    /// Where the Gibbs energy of a compound comes from.
+    pub fn explanation(&self, compound: CompoundId, title: String) -> Explanation {
+        let node = Node::of(self.network, self.energies, self.scheme, compound);
+        let gibbs = self.energies.gibbs_kj_per_mol(compound);
+        let mut remarks = Vec::new();
+        if gibbs.is_none() {
+            remarks.push(self.why_missing(compound));
+        }
+        let parts = match node.known.as_ref().and_then(|known| known.aqueous.clone()) {
+            Some((value, source)) => vec![Part {
+                quantity: "Gibbs energy of formation in water, as measured".to_owned(),
+                unit: "kJ/mol".to_owned(),
+                value: Some((value.mean, value.sd)),
+                source,
+                contributions: Vec::new(),
+            }],
+            None => self.parts(&node),
+        };
+        Explanation {
+            title,
+            smiles: smiles::write(&self.network.molecule(compound)),
+            parts,
+            gibbs_kj_per_mol: gibbs.map(|gibbs| (gibbs, node.sd_kj_per_mol(self.scheme))),
+            origin: if gibbs.is_some() { origin(&node) } else { GibbsOrigin::None },
+            remarks,
+        }
+    }
+
+    fn parts(&self, node: &Node) -> Vec<Part> {
+        let mut parts: Vec<Part> = Quantity::ALL.iter().map(|&quantity| self.part(node, quantity)).collect();
+        let plain = |quantity: &str, value: f64, source: &str| Part {
+            quantity: quantity.to_owned(),
+            unit: "J/mol/K".to_owned(),
+            value: Some((value, 0.0)),
+            source: source.to_owned(),
+            contributions: Vec::new(),
+        };
+        if node.measured(Quantity::Entropy).is_none() {
+            let value = -node.symmetry_entropy_j_per_mol_k;
+            parts.insert(2, plain("of which symmetry, -R ln(sigma)", value, "counted on the graph"));
+        }
+        parts.push(plain("entropy of the elements", node.element_entropy_j_per_mol_k, "CODATA Key Values, 1989"));
+        parts
+    }
+
+    fn part(&self, node: &Node, quantity: Quantity) -> Part {
+        let name = match quantity {
+            Quantity::Enthalpy => "enthalpy of formation, ideal gas",
+            Quantity::Entropy => "standard entropy, ideal gas",
+            Quantity::Solubility => "log10 of the Henry solubility",
+        };
+        let index = quantity as usize;
+        let (value, source, contributions) = if let Some(value) = node.measured(quantity) {
+            let sources = node.known.as_ref().map(|k| k.sources[index].clone()).unwrap_or_default();
+            ((value.mean, value.sd), format!("measured: {sources}"), Vec::new())
+        } else {
+            let own = node.model_sd[index];
+            let sd = (self.scheme.variance(quantity, &node.groups) + own * own).sqrt();
+            let source = format!("sum of groups; deviation from the scheme itself ± {own:.2}");
+            ((node.estimates[index], sd), source, self.contributions(node, quantity))
+        };
+        Part { quantity: name.to_owned(), unit: quantity.unit().to_owned(), value: Some(value), source, contributions }
+    }
+
+    fn contributions(&self, node: &Node, quantity: Quantity) -> Vec<Contribution> {
+        let names = features::names();
+        node.groups
+            .iter()
+            .map(|&(group, count)| Contribution {
+                label: names[group].clone(),
+                count,
+                value: self.scheme.values[quantity as usize][group],
+                sd: self.scheme.variance(quantity, &[(group, 1.0)]).sqrt(),
+                source: "data/fitted/groups.csv".to_owned(),
+            })
+            .collect()
+    }
+}
+
+fn origin(node: &Node) -> GibbsOrigin {
+    match node.origin() {
+        Origin::Measured => GibbsOrigin::Measured,
+        Origin::PartlyMeasured => GibbsOrigin::PartlyMeasured,
+        Origin::Estimated => GibbsOrigin::Estimated,
+    }
+}
+
+/// What each part rests on, in one line.
+fn source(node: &Node) -> String {
+    if let Some((_, source)) = node.known.as_ref().and_then(|known| known.aqueous.as_ref()) {
+        return source.clone();
+    }
+    let names = ["enthalpy", "entropy", "solubility"];
+    let of = |quantity: Quantity| match (node.measured(quantity), &node.known) {
+        (Some(_), Some(known)) => format!("{}: {}", names[quantity as usize], known.sources[quantity as usize]),
+        _ => format!("{}: groups", names[quantity as usize]),
+    };
+    Quantity::ALL.map(of).join(" | ")
+}

@@ -1,0 +1,5 @@
+//! Checks against what others have worked out, a module a source.
+
+mod counts;
+mod rdkit;
+mod steps;
