@@ -15,4 +15,6 @@ mod readme;
 mod reference;
 mod rule_files;
 mod rule_products;
+mod sentences;
+mod smiles;
 mod thermo;
