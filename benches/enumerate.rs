@@ -8,6 +8,7 @@ use criterion::{Criterion, Throughput, criterion_group, criterion_main};
 use haloshed::molecule::{Identity, Molecule};
 use haloshed::network::{Limits, Network, enumerate};
 use haloshed::rules::{Rule, RuleSet, Selection};
+use haloshed::thermo::{energies, shipped};
 
 fn rules(names: Option<&str>) -> Vec<Rule> {
     let only = names.map(|names| names.split(',').map(str::to_owned).collect());
@@ -59,6 +60,12 @@ fn perchloro_octane(c: &mut Criterion) {
     );
     group.throughput(Throughput::Elements(network.n_compounds() as u64));
     group.bench_function("network", |b| b.iter(|| run(&parent, &core, Identity::Constitutional)));
+    group.bench_function("network and energies", |b| {
+        b.iter(|| {
+            let network = run(&parent, &core, Identity::Constitutional);
+            energies(&network, shipped(), 1)
+        });
+    });
     group.finish();
 }
 

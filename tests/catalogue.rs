@@ -2,7 +2,8 @@
 
 use std::collections::BTreeSet;
 
-use haloshed::catalogue::{Entry, Reading, by_smiles, cas, cautions, entries, find, resolve};
+use haloshed::catalogue::folding::fold;
+use haloshed::catalogue::{Entry, LookupError, Reading, by_smiles, cas, cautions, entries, find, resolve};
 use haloshed::molecule::Identity;
 use haloshed::smiles::{read, write};
 
@@ -212,4 +213,37 @@ fn a_caution_for_one_isomer_stands_for_it_alone() {
     let beta = caution_texts(&find("beta-HCH").unwrap().smiles);
     assert!(lindane[0].contains("IARC group 1;"), "{lindane:?}");
     assert!(beta[0].contains("IARC group 2B"), "{beta:?}");
+}
+
+#[test]
+fn folding_a_key_changes_nothing() {
+    for text in entries().iter().flat_map(Entry::texts) {
+        let key = fold(text);
+        assert_eq!(fold(&key), key, "{text}");
+    }
+}
+
+proptest::proptest! {
+    #[test]
+    fn no_text_is_too_strange(text in ".{0,40}") {
+        // Whatever comes out, it came out; an error has a sentence.
+        if let Err(error) = resolve(&text) {
+            proptest::prop_assert!(!error.to_string().is_empty());
+        }
+    }
+
+    #[test]
+    fn one_changed_digit_of_a_cas_number_is_seen(row in 0usize..150, at in 0usize..10, digit in 0u8..10) {
+        let mut number = entries()[row].cas.clone().into_bytes();
+        let at = at % number.len();
+        proptest::prop_assume!(number[at].is_ascii_digit() && number[at] != b'0' + digit);
+        number[at] = b'0' + digit;
+        let changed = String::from_utf8(number).unwrap();
+        // A digit whose place and change multiply to tens is past what one check digit can see.
+        let (expected, found) = cas::check_digits(&changed);
+        proptest::prop_assert_eq!(
+            expected == found,
+            find(&changed).map_or_else(|error| matches!(error, LookupError::UnknownCas { .. }), |_| true)
+        );
+    }
 }

@@ -25,9 +25,18 @@ pub(crate) struct NetworkRequest {
     pub(crate) parent: Molecule,
     pub(crate) rules: Vec<Rule>,
     pub(crate) identity: IdentityChoice,
-    pub(crate) limits: Limits,
+    pub(crate) extent: Extent,
     pub(crate) n_threads: NonZeroUsize,
     pub(crate) conditions: Conditions,
+}
+
+/// How much of a network is wanted.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(crate) enum Extent {
+    /// All of it, within limits.
+    Whole(Limits),
+    /// The steps of the parents, and nothing beyond.
+    FirstSteps,
 }
 
 /// A network and how long it took.
@@ -97,7 +106,11 @@ impl IdentityChoice {
 /// Enumerates a network.
 pub(crate) fn build_network(request: NetworkRequest) -> Result<Built, Failure> {
     let started = Instant::now();
-    let NetworkRequest { parent, rules, identity, limits, n_threads, conditions } = request;
+    let NetworkRequest { parent, rules, identity, extent, n_threads, conditions } = request;
+    let limits = match extent {
+        Extent::Whole(limits) => limits,
+        Extent::FirstSteps => Limits { max_generation: Some(1), ..Limits::default() },
+    };
     let network = enumerate(&[parent], &rules, identity.of_molecules(), limits, n_threads.get())
         .map_err(|error| Report::plain(error.to_string()))?;
     let header = Header {
@@ -108,7 +121,7 @@ pub(crate) fn build_network(request: NetworkRequest) -> Result<Built, Failure> {
         conditions,
         rules: rules.iter().map(|rule| rule.name.clone()).collect(),
         complete: network.outcome() == Outcome::Complete,
-        warnings: warnings(&network),
+        warnings: isomer_warning(&network).into_iter().chain(limit_warning(&network, extent)).collect(),
     };
     let enumeration = started.elapsed();
     let energies = thermo::energies(&network, thermo::shipped(), n_threads.get());
@@ -124,14 +137,6 @@ fn conditions_of(header: &Header) -> Result<thermo::Conditions, Failure> {
 }
 
 impl Built {
-    /// The same without the warning that a generation limit was reached: the limit was meant.
-    pub(crate) fn cut_on_purpose(mut self) -> Built {
-        if let Outcome::Cut { limit: Limit::Generation(_), .. } = self.network.outcome() {
-            self.header.warnings.pop();
-        }
-        self
-    }
-
     /// What holds for the whole network.
     pub(crate) fn header(&self) -> &Header {
         &self.header
@@ -179,23 +184,26 @@ impl Built {
     }
 }
 
-/// What the reader must know before using the network.
-fn warnings(network: &Network) -> Vec<String> {
-    let mut warnings = Vec::new();
-    let n_parents = network.parents().len();
-    if n_parents > 1 {
-        warnings.push(format!("the compound was given without its configuration: all {n_parents} isomers are parents"));
+/// Says that the parent stands for several isomers.
+fn isomer_warning(network: &Network) -> Option<String> {
+    let n = network.parents().len();
+    (n > 1).then(|| format!("the compound was given without its configuration: all {n} isomers are parents"))
+}
+
+/// Says that a limit was reached, if it was one of the user's or the program's and not part of
+/// what was asked.
+fn limit_warning(network: &Network, extent: Extent) -> Option<String> {
+    let Outcome::Cut { limit, first_unexpanded } = network.outcome() else { return None };
+    if extent == Extent::FirstSteps && matches!(limit, Limit::Generation(_)) {
+        return None;
     }
-    if let Outcome::Cut { limit, first_unexpanded } = network.outcome() {
-        let n_left = network.n_compounds() - first_unexpanded;
-        let (compounds, option) = (if n_left == 1 { "compound" } else { "compounds" }, option_of(limit));
-        warnings.push(format!(
-            "the network is incomplete: {limit} was reached, and {n_left} {compounds} from id {} on were not \
-             followed further; raise {option} to go on",
-            first_unexpanded + 1
-        ));
-    }
-    warnings
+    let n_left = network.n_compounds() - first_unexpanded;
+    let (compounds, option) = (if n_left == 1 { "compound" } else { "compounds" }, option_of(limit));
+    Some(format!(
+        "the network is incomplete: {limit} was reached, and {n_left} {compounds} from id {} on were not followed \
+         further; raise {option} to go on",
+        first_unexpanded + 1
+    ))
 }
 
 fn option_of(limit: Limit) -> &'static str {

@@ -1,20 +1,20 @@
 //! `haloshed explain`: where the Gibbs energy of a compound comes from.
 
 use clap::Args;
-use haloshed::network::Limits;
 use haloshed::output::explain::{Explanation, write_explanation};
 use haloshed::output::record::{ByHalogen, Conditions};
 
-use super::Ending;
-use super::build::{BuildArgs, NetworkRequest, build_network};
+use super::build::{BuildArgs, Extent, NetworkRequest, build_network};
 use super::compound::read_compound;
 use super::destination::Destination;
 use super::failure::Failure;
+use super::{CAUTION, Ending};
 
 /// Print where the Gibbs energy of a compound comes from, group by group.
 ///
 /// Example: haloshed explain "ClC=C(Cl)Cl"
 #[derive(Debug, Args)]
+#[command(after_help = CAUTION)]
 pub(crate) struct ExplainArgs {
     /// The compound: a SMILES, a name, an abbreviation or a CAS number.
     #[arg(allow_hyphen_values = true)]
@@ -38,7 +38,7 @@ pub(crate) fn run(args: &ExplainArgs) -> Result<Ending, Failure> {
         // No rules: the compound itself, or its isomers, and nothing else.
         rules: Vec::new(),
         identity: args.build.identity,
-        limits: Limits::default(),
+        extent: Extent::FirstSteps,
         n_threads: args.build.n_threads(),
         conditions: USUAL,
     };

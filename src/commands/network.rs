@@ -15,8 +15,7 @@ use haloshed::output::summary::Summary;
 use haloshed::output::table::Table;
 use haloshed::output::{Records, Writer};
 
-use super::Ending;
-use super::build::{BuildArgs, Built, NetworkRequest, build_network};
+use super::build::{BuildArgs, Built, Extent, NetworkRequest, build_network};
 use super::compound::read_compound;
 use super::conditions::ConditionArgs;
 use super::destination::Destination;
@@ -24,11 +23,13 @@ use super::failure::Failure;
 use super::quantity::time;
 use super::report::warn;
 use super::rule_choice::RuleArgs;
+use super::{CAUTION, Ending};
 
 /// List everything a compound can turn into, and every step with its potential.
 ///
 /// Example: haloshed network "ClC(Cl)=C(Cl)Cl" --chloride 5mM -o pce.dot
 #[derive(Debug, Args)]
+#[command(after_help = CAUTION)]
 pub(crate) struct NetworkArgs {
     /// The compound: a SMILES, a name, an abbreviation or a CAS number.
     #[arg(allow_hyphen_values = true)]
@@ -114,7 +115,7 @@ pub(crate) fn run(args: &NetworkArgs) -> Result<Ending, Failure> {
         parent: read_compound(&args.compound)?,
         rules: args.rules.chosen()?,
         identity: args.build.identity,
-        limits: args.limits.limits(),
+        extent: Extent::Whole(args.limits.limits()),
         n_threads: args.build.n_threads(),
         conditions: args.conditions.conditions(),
     };
@@ -180,7 +181,8 @@ impl Plan {
                 if format == Format::Dot && !fits_a_page(built.n_compounds()) {
                     let n = built.n_compounds();
                     warn(&format!(
-                        "a figure of {n} compounds cannot be read on one page; --max-generation or --rules-only make it smaller"
+                        "a figure of {n} compounds cannot be read on one page; --max-generation or --rules-only \
+                         make it smaller"
                     ));
                 }
                 fill(writer(format, built).as_ref(), destination)

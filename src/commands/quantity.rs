@@ -190,8 +190,8 @@ mod tests {
 
     #[test]
     fn times_are_read() {
-        let read = ["30s", "2min", "1.5 h", "250 ms"].map(|text| time(text).unwrap().as_secs_f64());
-        assert_eq!(read, [30.0, 120.0, 5400.0, 0.25]);
+        let read = ["30s", "2min", "1.5 h", "250 ms"].map(|text| time(text).unwrap().as_millis());
+        assert_eq!(read, [30_000, 120_000, 5_400_000, 250]);
         check(
             |text| time(text).unwrap_err().to_string(),
             &[

@@ -1,21 +1,21 @@
 //! `haloshed refit`: the fitted tables anew, from the measured rows.
 
 use std::fs;
-use std::io::Write;
 use std::path::{Path, PathBuf};
 
 use clap::Args;
 use haloshed::thermo::{Sources, refit};
 
-use super::Ending;
 use super::destination::Destination;
 use super::failure::Failure;
 use super::report::Report;
+use super::{CAUTION, Ending};
 
 /// Fit the additive scheme to the measured rows and rewrite data/fitted; for maintainers.
 ///
 /// Example: haloshed refit data
 #[derive(Debug, Args)]
+#[command(after_help = CAUTION)]
 pub(crate) struct RefitArgs {
     /// The folder with gas.csv, henry.csv and priors.csv; tables go to its folder fitted.
     #[arg(default_value = "data")]

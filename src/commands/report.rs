@@ -5,7 +5,7 @@
 use std::io::{self, IsTerminal, Write};
 use std::ops::Range;
 
-use annotate_snippets::{AnnotationKind, Level, Renderer, Snippet};
+use annotate_snippets::{AnnotationKind, Group, Level, Renderer, Snippet};
 
 /// One error.
 #[derive(Debug, Clone, PartialEq, Eq)]
@@ -43,15 +43,19 @@ impl Report {
     }
 
     fn render(&self, renderer: &Renderer) -> String {
-        let mut group = annotate_snippets::Group::with_title(Level::ERROR.primary_title(&self.message));
-        if let Some(excerpt) = &self.excerpt {
-            let mark = AnnotationKind::Primary.span(excerpt.bounded_span()).label(&excerpt.label);
-            group = group.element(Snippet::source(&excerpt.text).path(&excerpt.origin).annotation(mark));
+        let title = Group::with_title(Level::ERROR.primary_title(&self.message));
+        match (&self.excerpt, &self.help) {
+            (Some(excerpt), help) => {
+                let mark = AnnotationKind::Primary.span(excerpt.bounded_span()).label(&excerpt.label);
+                let group = title.element(Snippet::source(&excerpt.text).path(&excerpt.origin).annotation(mark));
+                renderer.render(&[group.elements(help.as_ref().map(|help| Level::HELP.message(help)))])
+            }
+            (None, Some(help)) => {
+                let help = Group::with_title(Level::HELP.primary_title(help));
+                format!("{}\n{}", renderer.render(&[title]), renderer.render(&[help]))
+            }
+            (None, None) => renderer.render(&[title]),
         }
-        if let Some(help) = &self.help {
-            group = group.element(Level::HELP.message(help));
-        }
-        renderer.render(&[group])
     }
 }
 

@@ -6,9 +6,11 @@
 
 pub mod aromatic;
 pub mod canonical;
+pub mod condensed;
 pub mod element;
 pub mod formula;
 pub mod graph;
+pub mod priority;
 pub mod rings;
 pub mod stereo;
 

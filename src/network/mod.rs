@@ -1,7 +1,7 @@
 //! The network: everything that some parents can turn into, and every step between.
 //!
 //! Parents and rules go in, a [`Network`] comes out. Read [`limits`], then [`store`] (what a
-//! network is), [`enumerate`](mod@enumerate) (how it is made; [`states`] and [`outside`] help),
+//! network is), [`enumerate`](mod@enumerate) (how it is made; [`states`] and `outside` help),
 //! [`half_reaction`] (what a step takes up and gives off) and [`graph`] (petgraph's traits).
 
 pub mod enumerate;

@@ -90,7 +90,6 @@ fn write_compounds<W: io::Write>(network: &dyn Records, writer: &mut ::csv::Writ
 }
 
 fn compound_row(compound: &Compound) -> CompoundRow<'_> {
-    let first = |texts: &'_ [String]| texts.first().cloned().unwrap_or_default();
     let others = compound.names.iter().skip(1).chain(compound.abbreviations.iter().skip(1));
     let cautions = compound.cautions.iter().map(|c| format!("{} [{}]", c.text, c.source));
     CompoundRow {
@@ -99,8 +98,8 @@ fn compound_row(compound: &Compound) -> CompoundRow<'_> {
         smiles: guarded(&compound.smiles),
         formula: guarded(&compound.formula),
         condensed: guarded(&compound.condensed),
-        name: guarded_owned(first(&compound.names)),
-        abbreviation: guarded_owned(first(&compound.abbreviations)),
+        name: guarded(compound.names.first().map_or("", String::as_str)),
+        abbreviation: guarded(compound.abbreviations.first().map_or("", String::as_str)),
         other_names: guarded(&others.map(String::as_str).collect::<Vec<_>>().join("; ")).into_owned(),
         cas: guarded(compound.cas.as_deref().unwrap_or_default()),
         is_parent: compound.is_parent,
@@ -118,10 +117,6 @@ fn compound_row(compound: &Compound) -> CompoundRow<'_> {
         gibbs_source: guarded(&compound.gibbs_source),
         cautions: guarded(&cautions.collect::<Vec<_>>().join("; ")).into_owned(),
     }
-}
-
-fn guarded_owned(text: String) -> Cow<'static, str> {
-    Cow::Owned(guarded(&text).into_owned())
 }
 
 #[derive(Serialize, Default)]

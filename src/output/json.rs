@@ -15,13 +15,21 @@ use super::{Records, Writer};
 /// Writes [`record::Network`](super::record::Network) as JSON.
 ///
 /// # Example
-/// ```no_run
-/// # fn network() -> haloshed::output::record::Network { unimplemented!() }
+/// ```
+/// use haloshed::output::record::Network;
 /// use haloshed::output::{Writer, json::Json};
 ///
-/// let mut text = Vec::new();
-/// Json.write(&network(), &mut text)?;
-/// # Ok::<(), std::io::Error>(())
+/// let text = r#"{
+///   "format": "haloshed-network/1", "program": {"name": "haloshed", "version": "0"}, "parents": [],
+///   "identity": "geometric", "rules": [], "complete": true, "warnings": [], "compounds": [], "steps": [],
+///   "conditions": {"temperature_kelvin": 298.15, "ph": 7.0,
+///     "halide_mol_per_litre": {"F": 0.001, "Cl": 0.001, "Br": 0.001, "I": 0.001}}
+/// }"#;
+/// let network: Network = serde_json::from_str(text)?;
+/// let mut written = Vec::new();
+/// Json.write(&network, &mut written)?;
+/// assert_eq!(serde_json::from_slice::<Network>(&written)?, network);
+/// # Ok::<(), Box<dyn std::error::Error>>(())
 /// ```
 #[derive(Debug, Clone, Copy)]
 pub struct Json;

@@ -64,7 +64,7 @@ impl Notes {
         }
         writeln!(out, "\nNotes")?;
         for (index, text) in self.0.iter().enumerate() {
-            write_wrapped(&format!("{:3}  {text}", index + 1), 5, out)?;
+            write_wrapped(&format!("{} {text}", index + 1), 3, out)?;
         }
         Ok(())
     }

@@ -6,6 +6,8 @@
 //!
 //! Invariant: a number that is not known is null, and a field beside it says why.
 
+use std::fmt::Write as _;
+
 use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
@@ -218,8 +220,8 @@ pub struct Step {
     pub e_sd_volt: Option<f64>,
     /// Why there is no potential; null where there is one.
     pub e_missing: Option<String>,
-    /// Gibbs energy of the step under the network's conditions, in kJ/mol of step; given where
-    /// no electron is transferred.
+    /// Gibbs energy of the step under the network's conditions, in kJ/mol; electrons count as
+    /// those of the standard hydrogen electrode.
     #[serde(serialize_with = "decimals::kj_per_mol")]
     pub gibbs_step_kj_per_mol: Option<f64>,
     /// Its standard uncertainty in kJ/mol.
@@ -265,7 +267,7 @@ impl Conditions {
             format!("{} °C, pH {}", decimals::plain(self.temperature_kelvin - 273.15), decimals::plain(self.ph));
         for (activity, group) in groups {
             let each = if group.len() > 1 { "each " } else { "" };
-            text.push_str(&format!(", {} {each}{}", group.join(", "), decimals::concentration_text(activity)));
+            let _ = write!(text, ", {} {each}{}", group.join(", "), decimals::concentration_text(activity));
         }
         text
     }

@@ -21,7 +21,10 @@ impl Writer for HalfReactions {
             write_wrapped(&format!("Warning: {warning}"), 2, out)?;
         }
         let mut notes = Notes::default();
-        for parent in header.parents.iter().filter_map(|&id| network.compound(id)) {
+        for (index, parent) in header.parents.iter().filter_map(|&id| network.compound(id)).enumerate() {
+            if index > 0 {
+                writeln!(out)?;
+            }
             write_wrapped(&format!("Half-reactions of {}", title(parent)), 2, out)?;
             write_wrapped(&format!("E' at {conditions}, organics at equal activity; potentials against SHE"), 2, out)?;
             write_parent(&network, parent, &mut notes, out)?;
@@ -35,11 +38,11 @@ fn write_parent(network: &Network, parent: &Compound, notes: &mut Notes, out: &m
     steps.sort_by(|a, b| by_potential(a, b));
     let (reductions, others): (Vec<&Step>, Vec<&Step>) = steps.into_iter().partition(|step| step.electrons != 0);
     if reductions.is_empty() {
-        writeln!(out, "\nNo rule reduces it.\n")?;
+        writeln!(out, "\nNo rule reduces it.")?;
     } else {
         let rows = reductions.iter().map(|step| reduction_row(network, step, notes)).collect();
-        let headings = ["E', V", "E°, V", "±", "half-reaction", "rule", "n", ""];
-        writeln!(out, "\n{}\n", table(&headings, &[0, 1, 2, 5], rows))?;
+        let headings = ["E', V", "E°, V", "±", "half-reaction", "rule", "n"];
+        writeln!(out, "\n{}", table(&headings, &[0, 1, 2, 5], rows))?;
     }
     if others.is_empty() {
         return Ok(());
@@ -47,33 +50,30 @@ fn write_parent(network: &Network, parent: &Compound, notes: &mut Notes, out: &m
     let rows = others.iter().map(|step| {
         let energy = energy_text(step);
         let energy = energy.strip_prefix("dG' ").unwrap_or(&energy).to_owned();
-        let mark = missing_mark(step, notes);
-        vec![energy, equation(network, step), step.rule.clone(), degeneracy_text(step.degeneracy), mark]
+        let energy = missing_mark(step, notes).unwrap_or(energy);
+        vec![energy, equation(network, step), step.rule.clone(), degeneracy_text(step.degeneracy)]
     });
-    let headings = ["dG', kJ/mol", "reaction without electrons", "rule", "n", ""];
-    writeln!(out, "{}\n", table(&headings, &[0, 3], rows.collect()))
+    let headings = ["dG', kJ/mol", "reaction without electrons", "rule", "n"];
+    writeln!(out, "\n{}", table(&headings, &[0, 3], rows.collect()))
 }
 
 fn reduction_row(network: &Network, step: &Step, notes: &mut Notes) -> Vec<String> {
     let volt = |value: Option<f64>| value.map_or_else(|| "-".to_owned(), |v| volt_text(v, step.e_sd_volt));
     vec![
-        volt(step.e_volt),
+        missing_mark(step, notes).unwrap_or_else(|| volt(step.e_volt)),
         volt(step.e_standard_volt),
         step.e_sd_volt.map_or_else(String::new, volt_sd_text),
         equation(network, step),
         step.rule.clone(),
         degeneracy_text(step.degeneracy),
-        missing_mark(step, notes),
     ]
 }
 
-fn missing_mark(step: &Step, notes: &mut Notes) -> String {
-    match &step.e_missing {
-        Some(reason) if step.e_volt.is_none() && step.gibbs_step_kj_per_mol.is_none() => {
-            format!("note {}", notes.number(format!("no estimate: {reason}")))
-        }
-        _ => String::new(),
-    }
+/// Stands for the value of a step that has none.
+fn missing_mark(step: &Step, notes: &mut Notes) -> Option<String> {
+    let has_value = step.e_volt.is_some() || step.gibbs_step_kj_per_mol.is_some();
+    let reason = step.e_missing.as_ref().filter(|_| !has_value)?;
+    Some(format!("note {}", notes.number(format!("no estimate: {reason}"))))
 }
 
 /// A step as a balanced equation with condensed formulas.

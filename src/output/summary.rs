@@ -16,11 +16,12 @@ pub struct Summary {
     pub energies: Option<Duration>,
 }
 
+/// Numbers of one generation.
 #[derive(Default, Clone)]
 struct Generation {
-    n_compounds: usize,
-    n_transients: usize,
-    n_end_products: usize,
+    compounds: usize,
+    transients: usize,
+    end_products: usize,
 }
 
 #[derive(Default)]
@@ -35,7 +36,7 @@ impl Writer for Summary {
     fn write(&self, network: &dyn Records, out: &mut dyn io::Write) -> io::Result<()> {
         let counts = Counts::of(network);
         let header = network.header();
-        let n_compounds: usize = counts.generations.iter().map(|g| g.n_compounds).sum();
+        let n_compounds: usize = counts.generations.iter().map(|g| g.compounds).sum();
         let n_steps: usize = counts.n_steps_by_rule.iter().sum();
         let extent = if header.complete { "complete" } else { "INCOMPLETE: a limit was reached" };
         writeln!(out, "{n_compounds} compounds, {n_steps} steps; {extent}")?;
@@ -82,9 +83,9 @@ impl Counts {
                 counts.generations.resize(generation + 1, Generation::default());
             }
             let tally = &mut counts.generations[generation];
-            tally.n_compounds += 1;
-            tally.n_transients += usize::from(compound.transient);
-            tally.n_end_products += usize::from(compound.is_end_product);
+            tally.compounds += 1;
+            tally.transients += usize::from(compound.transient);
+            tally.end_products += usize::from(compound.is_end_product);
         }
         for step in network.steps() {
             let rule = network.header().rules.iter().position(|name| *name == step.rule);
@@ -99,7 +100,7 @@ impl Counts {
 
 fn generation_rows(generations: &[Generation]) -> Vec<Vec<String>> {
     let rows = generations.iter().enumerate().map(|(number, g)| {
-        vec![number.to_string(), g.n_compounds.to_string(), g.n_transients.to_string(), g.n_end_products.to_string()]
+        vec![number.to_string(), g.compounds.to_string(), g.transients.to_string(), g.end_products.to_string()]
     });
     rows.collect()
 }

@@ -2,8 +2,8 @@
 //!
 //! A subset that follows OpenSMILES where it overlaps; `grammar/smiles.abnf` says what is read.
 //! Text is cut into tokens ([`syntax`]), the tokens become a drawing ([`draft`]), the drawing a
-//! molecule with its hydrogens and configuration ([`read`](mod@read)); [`error`] says what can be wrong and
-//! where. [`write`](mod@write) goes the other way and is canonical.
+//! molecule with its hydrogens and configuration (`read`); [`error`] says what can be wrong and
+//! where. `write` goes the other way and is canonical.
 //!
 //! # Example
 //! ```

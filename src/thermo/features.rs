@@ -7,7 +7,7 @@
 //! pair of halogens stands a group of any pair, so that a pair that was never measured takes
 //! after its kin.
 //!
-//! Invariant: [`names`] and [`count`] agree on what each index means.
+//! Invariant: [`names`] and `count` agree on what each index means.
 //!
 //! # Source
 //! Additivity of bonds and of next-nearest neighbours: S. W. Benson, J. H. Buss, J. Chem. Phys.

@@ -1,6 +1,6 @@
 //! The additive scheme as fitted: group values, their covariance, and what was measured.
 //!
-//! The tables in `data/fitted/` are written by [`refit`](super::refit) and embedded. They are
+//! The tables in `data/fitted/` are written by [`refit`](mod@super::refit) and embedded. They are
 //! read once; covariances only when an uncertainty is first asked for.
 
 use std::sync::OnceLock;

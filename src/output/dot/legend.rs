@@ -28,7 +28,9 @@ pub(super) fn write_legend(figure: &Figure, out: &mut dyn io::Write) -> io::Resu
         writeln!(out, "    {{ rank=same; {} [style=invis]; }}", rank.join(" -> "))?;
     }
     writeln!(out, "  }}")?;
-    writeln!(out, "  g{last} -> k0 [style=invis];")
+    // The names of the generations stand at the left or the bottom; the legend is hung on the
+    // node of its first rank that is nearest to them.
+    writeln!(out, "  g{last} -> {} [style=invis];", upper.first().map_or("k0", String::as_str))
 }
 
 fn write_kinds(

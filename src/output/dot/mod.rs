@@ -14,6 +14,7 @@ mod page;
 pub mod style;
 pub mod text;
 
+use std::fmt::Write as _;
 use std::io;
 
 use self::caption::caption;
@@ -82,7 +83,7 @@ impl Figure {
             Direction::Right => "LR",
         };
         let size = self.page.inches.map_or_else(String::new, |(width, height)| format!("size=\"{width},{height}\", "));
-        writeln!(out, "  graph [{size}rankdir={direction}, margin=0.1, ranksep=0.45, nodesep=0.18,")?;
+        writeln!(out, "  graph [{size}rankdir={direction}, margin=0.1, ranksep=0.45, nodesep=0.14,")?;
         writeln!(out, "    fontname=\"Arial\", fontsize={SMALL_POINTS}, labelloc=b, labeljust=l,")?;
         writeln!(out, "    label=<{}>];", caption(&self.network))?;
         writeln!(
@@ -122,7 +123,7 @@ impl Figure {
         }
         if !compound.title().is_empty() {
             let lines: Vec<String> = name_lines(compound).iter().map(|line| markup(line)).collect();
-            label.push_str(&format!("<br/><font point-size=\"{SMALL_POINTS}\">{}</font>", lines.join("<br/>")));
+            let _ = write!(label, "<br/><font point-size=\"{SMALL_POINTS}\">{}</font>", lines.join("<br/>"));
         }
         let style = NodeKind::of(compound).attributes();
         writeln!(out, "    c{} [label=<{label}>, tooltip={}{style}];", compound.id, quoted(&compound.smiles))
@@ -131,7 +132,8 @@ impl Figure {
     fn write_step(&self, step: &Step, out: &mut dyn io::Write) -> io::Result<()> {
         let RuleStyle { mark, line, arrow } = self.style_of(&step.rule);
         let energy = match (step.e_volt, step.gibbs_step_kj_per_mol) {
-            (Some(volt), _) => volt_text(volt, step.e_sd_volt),
+            // Two decimals are enough for a figure; the tables have them all.
+            (Some(volt), _) => volt_text(volt, None),
             (None, Some(kj)) => format!("({} kJ)", kj_text(kj, step.gibbs_step_sd_kj_per_mol)),
             (None, None) => "(?)".to_owned(),
         };
@@ -139,7 +141,7 @@ impl Figure {
         let is_onward = generation(step.to) > generation(step.from);
         // Graphviz routes arrows within a rank badly when their text takes up room there.
         let (label, constraint) = if is_onward { ("label", "") } else { ("xlabel", ", constraint=false") };
-        let text = quoted(&format!(" {mark} {energy} "));
+        let text = quoted(&format!(" {mark} {energy}"));
         writeln!(out, "  c{} -> c{} [{label}={text}, style={line}, arrowhead={arrow}{constraint}];", step.from, step.to)
     }
 

@@ -10,7 +10,7 @@ use super::text::name_lines;
 use crate::output::record::{Compound, Network};
 
 /// Long and short side of an A4 page inside its margins, in inches.
-const PAGE_INCHES: [f64; 2] = [10.9, 7.5];
+const PAGE_INCHES: [f64; 2] = [11.0, 7.6];
 /// Most compounds that are fitted to one page: of more, nothing could be read.
 pub(super) const MOST_FOR_A_PAGE: usize = 60;
 

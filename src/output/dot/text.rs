@@ -81,13 +81,11 @@ const NAME_LINE: usize = 16;
 /// Name and abbreviation of a compound in short lines, broken after hyphens and at spaces.
 pub fn name_lines(compound: &Compound) -> Vec<String> {
     let title = compound.title();
-    let mut lines = vec![String::new()];
+    let mut lines: Vec<String> = Vec::new();
     for piece in title.split_inclusive(['-', ' ']) {
-        let line = lines.last_mut().expect("there is a line from the start");
-        if line.is_empty() || line.chars().count() + piece.trim_end().chars().count() <= NAME_LINE {
-            line.push_str(piece);
-        } else {
-            lines.push(piece.to_owned());
+        match lines.last_mut() {
+            Some(line) if line.chars().count() + piece.trim_end().chars().count() <= NAME_LINE => line.push_str(piece),
+            _ => lines.push(piece.to_owned()),
         }
     }
     lines.iter().map(|line| line.trim_end().to_owned()).collect()
