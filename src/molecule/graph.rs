@@ -359,14 +359,14 @@ impl Molecule {
     }
 
     /// Whether an aromatic atom has a double bond in each Kekulé form (carbon always; nitrogen
-    /// and its kin with two ligands; oxygen and its kin never).
+    /// and its kin with two ligands; oxygen and its kin never; a lone pair of an anion takes its place).
     pub(crate) fn takes_ring_double_bond(&self, atom: usize) -> bool {
         let a = self.atom(atom);
         let n_ligands = self.degree(atom) + usize::from(a.n_hydrogens);
         let exocyclic_double = self.neighbours(atom).any(|(_, order, _)| order == BondOrder::Double);
         match a.element {
             Element::C => !exocyclic_double && a.charge == 0,
-            Element::N | Element::P => n_ligands == 2 || a.charge == 1,
+            Element::N | Element::P => n_ligands == 2 && a.charge == 0 || a.charge == 1,
             Element::O | Element::S => a.charge == 1,
             _ => false,
         }

@@ -1,153 +1,235 @@
-//! Direction marks: which single bonds get `/` or `\` so that every double bond reads back.
+//! Chooses the direction marks with which double bonds are written.
 //!
-//! A direction says whether the atom written second lies above the first. The two ends of a
-//! stereo double bond need one marked ligand each; a single bond between two double bonds
-//! serves both. Double bonds are settled outward from the first, each next to one settled
-//! before where possible, so that a shared bond is known before it is needed.
+//! Geometry needs a mark on one ligand at each end of its double bond. A single bond between
+//! two double bonds serves both, so marks along a conjugated chain depend on each other, and a
+//! mark must not give geometry to a double bond between marked ones that has none. So marks
+//! are chosen one end after the other, and taken back when they cannot agree; an end whose
+//! bonds are of no use writes out its hydrogen and marks that.
+//!
+//! A *carrier* is what can bear a mark: a bond, or the hydrogen written at an atom.
 
-use crate::molecule::{Geometry, Ligand, Molecule};
+use crate::molecule::{BondOrder, Element, Geometry, Ligand, Molecule, Unit};
 
-/// Direction of each bond: whether its atom written second lies above its first, and whether
-/// that is to be written.
+use super::syntax::BondSymbol;
+
+/// Marks by bond, as read from the end that is written first, and by atom for the hydrogens
+/// that must be written.
 pub(super) struct Marks {
-    above: Vec<Option<bool>>,
-    is_written: Vec<bool>,
+    pub(super) on_bond: Vec<Option<BondSymbol>>,
+    pub(super) on_hydrogen: Vec<Option<BondSymbol>>,
 }
 
-/// A double bond whose geometry the marks cannot tell, in a ring of conjugated double bonds.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub(super) struct Conflict {
-    /// The double bond.
-    pub(super) bond: usize,
-}
-
-impl Marks {
-    /// Marks for all double bonds with geometry. `position` is each atom's place in the text.
-    pub(super) fn of(molecule: &Molecule, position: &[usize]) -> Result<Marks, Conflict> {
-        let n = molecule.n_bonds();
-        let mut marks = Marks { above: vec![None; n], is_written: vec![false; n] };
-        let mut open: Vec<usize> = (0..n).filter(|&b| molecule.geometry(b).is_some()).collect();
-        let start = |bond: usize| {
-            let (a, b, _) = molecule.bond(bond);
-            position[a].min(position[b])
-        };
-        open.sort_by_key(|&bond| start(bond));
-        while !open.is_empty() {
-            let next = open.iter().position(|&bond| marks.touches(molecule, bond)).unwrap_or(0);
-            let bond = open.remove(next);
-            marks.settle(molecule, position, bond)?;
+/// Marks for a molecule whose atom `i` is written at `position[i]`.
+///
+/// Geometry that no choice of marks could express would be left out; no molecule is known
+/// where this happens, since a ring of double bonds has a hydrogen or a substituent somewhere.
+pub(super) fn choose(molecule: &Molecule, position: &[usize]) -> Marks {
+    let n_carriers = molecule.n_bonds() + molecule.n_atoms();
+    let mut on_carrier = vec![None; n_carriers];
+    if (0..molecule.n_bonds()).any(|bond| molecule.geometry(bond).is_some()) {
+        let puzzle = Puzzle::of(molecule, position);
+        if let Some(signs) = puzzle.solve(Preference::Shared).or_else(|| puzzle.solve(Preference::Apart)) {
+            on_carrier = signs;
         }
-        marks.turn(molecule, position);
-        Ok(marks)
+    }
+    let on_hydrogen = on_carrier.split_off(molecule.n_bonds());
+    Marks { on_bond: on_carrier, on_hydrogen }
+}
+
+/// Which carrier an end tries first.
+#[derive(Clone, Copy, PartialEq, Eq)]
+enum Preference {
+    /// One that serves another double bond too: few marks.
+    Shared,
+    /// One of its own: few dependences.
+    Apart,
+}
+
+/// Most choices that are looked at before the preference is given up.
+const MOST_STEPS: usize = 50_000;
+
+struct Puzzle<'a> {
+    molecule: &'a Molecule,
+    position: &'a [usize],
+    /// Both ends of each double bond with geometry, in the order of writing.
+    ends: Vec<usize>,
+    /// Double bonds with geometry.
+    given: Vec<usize>,
+    /// Double bonds that could have geometry and have none.
+    open: Vec<usize>,
+    /// Carbons with a double bond, where two marked ligands must stand on two sides.
+    planar: Vec<usize>,
+}
+
+impl<'a> Puzzle<'a> {
+    fn of(molecule: &'a Molecule, position: &'a [usize]) -> Puzzle<'a> {
+        let (mut given, mut open) = (Vec::new(), Vec::new());
+        for unit in molecule.candidate_units() {
+            if let Unit::DoubleBond(bond) = unit {
+                if molecule.geometry(bond).is_some() { given.push(bond) } else { open.push(bond) }
+            }
+        }
+        let written_at = |bond: usize| {
+            let (a, b, _) = molecule.bond(bond);
+            let (a, b) = (position[a], position[b]);
+            (a.min(b), a.max(b))
+        };
+        given.sort_by_key(|&bond| written_at(bond));
+        let mut ends: Vec<usize> = given.iter().flat_map(|&bond| <[usize; 2]>::from(ends_of(molecule, bond))).collect();
+        ends.sort_by_key(|&end| position[end]);
+        let is_planar = |&atom: &usize| {
+            molecule.atom(atom).element == Element::C
+                && molecule.neighbours(atom).any(|(_, order, _)| order == BondOrder::Double)
+        };
+        let planar = (0..molecule.n_atoms()).filter(is_planar).collect();
+        Puzzle { molecule, position, ends, given, open, planar }
     }
 
-    /// Turns the marks of each connected set round if the first one written is no `/`.
-    fn turn(&mut self, molecule: &Molecule, position: &[usize]) {
-        let mut order: Vec<usize> = (0..molecule.n_bonds()).filter(|&b| self.is_written[b]).collect();
-        let place = |bond: usize| {
-            let (a, b, _) = molecule.bond(bond);
-            (position[a].max(position[b]), position[a].min(position[b]))
-        };
-        order.sort_by_key(|&bond| place(bond));
-        let mut is_done = vec![false; molecule.n_bonds()];
-        for first in order {
-            if is_done[first] {
+    /// A mark for each carrier that needs one, or nothing if this preference leads nowhere.
+    fn solve(&self, preference: Preference) -> Option<Vec<Option<BondSymbol>>> {
+        let options: Vec<Vec<usize>> = self.ends.iter().map(|&end| self.options(end, preference)).collect();
+        let mut marked = vec![false; self.molecule.n_bonds() + self.molecule.n_atoms()];
+        // For each end passed: which of its options was taken; none if it was marked already.
+        let mut taken: Vec<Option<usize>> = Vec::new();
+        let mut next_option = 0;
+        for _ in 0..MOST_STEPS {
+            let k = taken.len();
+            if k == self.ends.len() {
+                return self.signs(&marked);
+            }
+            if next_option == 0 && self.carriers(self.ends[k]).any(|(carrier, _)| marked[carrier]) {
+                taken.push(None);
                 continue;
             }
-            let turned = self.above[first] == Some(false);
-            let mut set = vec![first];
-            is_done[first] = true;
-            while let Some(bond) = set.pop() {
-                if turned {
-                    self.above[bond] = self.above[bond].map(|above| !above);
+            if let Some(&carrier) = options[k].get(next_option) {
+                marked[carrier] = true;
+                if !self.says_too_much(&marked) && self.signs(&marked).is_some() {
+                    taken.push(Some(next_option));
+                    next_option = 0;
+                } else {
+                    marked[carrier] = false;
+                    next_option += 1;
                 }
-                for other in self.bound_to(molecule, bond) {
-                    if !std::mem::replace(&mut is_done[other], true) {
-                        set.push(other);
+                continue;
+            }
+            // Nothing is left here: go back to the last end that had a choice.
+            let choice = std::iter::from_fn(|| taken.pop()).flatten().next()?;
+            marked[options[taken.len()][choice]] = false;
+            next_option = choice + 1;
+        }
+        None
+    }
+
+    /// What can bear a mark at an end, as (carrier, ligand): single bonds and hydrogen.
+    fn carriers(&self, end: usize) -> impl Iterator<Item = (usize, Ligand)> + '_ {
+        let single = self.molecule.neighbours(end).filter(|&(_, order, _)| order == BondOrder::Single);
+        let bonds = single.map(|(n, _, bond)| (bond, Ligand::Neighbour(n)));
+        let has_hydrogen = self.molecule.atom(end).n_hydrogens > 0;
+        let hydrogen = has_hydrogen.then_some((self.molecule.n_bonds() + end, Ligand::Hydrogen));
+        bonds.chain(hydrogen)
+    }
+
+    fn options(&self, end: usize, preference: Preference) -> Vec<usize> {
+        let rank = |ligand: Ligand| match (ligand, preference) {
+            (Ligand::Neighbour(n), Preference::Shared) => (u8::from(!self.ends.contains(&n)), self.position[n]),
+            (Ligand::Neighbour(n), Preference::Apart) => (2 * u8::from(self.planar.contains(&n)), self.position[n]),
+            (Ligand::Hydrogen, Preference::Shared) => (2, 0),
+            (Ligand::Hydrogen, Preference::Apart) => (1, 0),
+        };
+        let mut options: Vec<((u8, usize), usize)> =
+            self.carriers(end).map(|(carrier, ligand)| (rank(ligand), carrier)).collect();
+        options.sort_unstable();
+        options.into_iter().map(|(_, carrier)| carrier).collect()
+    }
+
+    /// Whether marks give geometry to a double bond that has none.
+    fn says_too_much(&self, marked: &[bool]) -> bool {
+        self.open.iter().any(|&bond| {
+            let (a, b) = ends_of(self.molecule, bond);
+            [a, b].into_iter().all(|end| self.carriers(end).any(|(carrier, _)| marked[carrier]))
+        })
+    }
+
+    /// A mark for each marked carrier so that all geometries come out, if there are such; the
+    /// first one written that is free to choose is `/`.
+    fn signs(&self, marked: &[bool]) -> Option<Vec<Option<BondSymbol>>> {
+        let mut links: Vec<Vec<(usize, bool)>> = vec![Vec::new(); marked.len()];
+        let mut link = |x: usize, y: usize, differ: bool| {
+            links[x].push((y, differ));
+            links[y].push((x, differ));
+        };
+        for &atom in &self.planar {
+            if let [x, y] = &self.marked_at(atom, marked)[..] {
+                link(x.carrier, y.carrier, x.reads_down == y.reads_down);
+            }
+        }
+        for &bond in &self.given {
+            let (a, b) = ends_of(self.molecule, bond);
+            let (at_a, at_b) = (self.marked_at(a, marked), self.marked_at(b, marked));
+            if let (Some(x), Some(y)) = (at_a.first(), at_b.first()) {
+                let is_trans = self.molecule.geometry_between(bond, x.ligand, y.ligand) == Some(Geometry::Trans);
+                link(x.carrier, y.carrier, is_trans ^ x.reads_down ^ y.reads_down);
+            }
+        }
+        self.spread(marked, &links)
+    }
+
+    fn marked_at(&self, atom: usize, marked: &[bool]) -> Vec<MarkedCarrier> {
+        let carriers = self.carriers(atom).filter(|&(carrier, _)| marked[carrier]);
+        carriers
+            .map(|(carrier, ligand)| {
+                let reads_down = matches!(ligand, Ligand::Neighbour(n) if self.position[n] < self.position[atom]);
+                MarkedCarrier { carrier, ligand, reads_down }
+            })
+            .collect()
+    }
+
+    fn spread(&self, marked: &[bool], links: &[Vec<(usize, bool)>]) -> Option<Vec<Option<BondSymbol>>> {
+        let mut is_down: Vec<Option<bool>> = vec![None; marked.len()];
+        let mut starts: Vec<usize> = (0..marked.len()).filter(|&carrier| marked[carrier]).collect();
+        starts.sort_by_key(|&carrier| self.written_at(carrier));
+        for start in starts {
+            if is_down[start].is_some() {
+                continue;
+            }
+            is_down[start] = Some(false);
+            let mut stack = vec![(start, false)];
+            while let Some((x, value)) = stack.pop() {
+                for &(y, differ) in &links[x] {
+                    match is_down[y] {
+                        None => {
+                            is_down[y] = Some(value ^ differ);
+                            stack.push((y, value ^ differ));
+                        }
+                        Some(known) if known != value ^ differ => return None,
+                        Some(_) => {}
                     }
                 }
             }
         }
+        let symbol = |down: bool| if down { BondSymbol::Down } else { BondSymbol::Up };
+        Some(is_down.into_iter().map(|down| down.map(symbol)).collect())
     }
 
-    /// Bonds whose direction is tied to a bond's by a double bond with geometry.
-    fn bound_to(&self, molecule: &Molecule, bond: usize) -> Vec<usize> {
-        let (a, b, _) = molecule.bond(bond);
-        let mut found = Vec::new();
-        for end in [a, b] {
-            for (other, _, _) in molecule.neighbours(end).filter(|n| molecule.geometry(n.2).is_some()) {
-                for at in [end, other] {
-                    found.extend(molecule.neighbours(at).map(|n| n.2).filter(|&l| self.above[l].is_some()));
-                }
-            }
+    fn written_at(&self, carrier: usize) -> (usize, usize) {
+        if let Some(atom) = carrier.checked_sub(self.molecule.n_bonds()) {
+            return (self.position[atom], usize::MAX);
         }
-        found
+        let (a, b) = ends_of(self.molecule, carrier);
+        let (a, b) = (self.position[a], self.position[b]);
+        (a.max(b), a.min(b))
     }
+}
 
-    /// Mark of a bond as written from its first atom, if it has one: true for `/`.
-    pub(super) fn written(&self, bond: usize) -> Option<bool> {
-        self.above[bond].filter(|_| self.is_written[bond])
-    }
+/// A carrier with a mark, seen from one of its atoms.
+struct MarkedCarrier {
+    carrier: usize,
+    ligand: Ligand,
+    /// Whether `/` puts the ligand below the atom: when the ligand is written first.
+    reads_down: bool,
+}
 
-    /// Whether any ligand bond of a double bond is known already.
-    fn touches(&self, molecule: &Molecule, bond: usize) -> bool {
-        let (a, b, _) = molecule.bond(bond);
-        [a, b].into_iter().any(|end| molecule.neighbours(end).any(|(_, _, ligand)| self.above[ligand].is_some()))
-    }
-
-    /// Settles a double bond from the end that is known already, else from the first written.
-    fn settle(&mut self, molecule: &Molecule, position: &[usize], bond: usize) -> Result<(), Conflict> {
-        let (x, y, _) = molecule.bond(bond);
-        let is_unknown = |end: usize| !molecule.neighbours(end).any(|(_, _, ligand)| self.above[ligand].is_some());
-        let (a, b) = if (is_unknown(x), position[x]) < (is_unknown(y), position[y]) { (x, y) } else { (y, x) };
-        let (first, at_first) = self.carrier(molecule, position, a, b).ok_or(Conflict { bond })?;
-        let above_first = self.side(position, a, first, at_first).unwrap_or(position[a] < position[at_first]);
-        self.set_end(molecule, position, a, b, at_first, above_first);
-        let (second, at_second) = self.carrier(molecule, position, b, a).ok_or(Conflict { bond })?;
-        let (at_x, at_y) = if a == x { (at_first, at_second) } else { (at_second, at_first) };
-        let geometry = molecule.geometry_between(bond, Ligand::Neighbour(at_x), Ligand::Neighbour(at_y));
-        let above_second = above_first == (geometry == Some(Geometry::Cis));
-        if self.side(position, b, second, at_second).is_some_and(|known| known != above_second) {
-            return Err(Conflict { bond });
-        }
-        self.set_end(molecule, position, b, a, at_second, above_second);
-        self.is_written[first] = true;
-        self.is_written[second] = true;
-        Ok(())
-    }
-
-    /// The ligand bond to mark at an end, with the ligand: one written already, else one that
-    /// is known, else one that serves no other double bond, else the first in the text.
-    fn carrier(&self, molecule: &Molecule, position: &[usize], end: usize, other: usize) -> Option<(usize, usize)> {
-        let is_shared =
-            |ligand: usize| molecule.neighbours(ligand).any(|(_, _, bond)| molecule.geometry(bond).is_some());
-        molecule
-            .neighbours(end)
-            .filter(|&(ligand, _, _)| ligand != other)
-            .map(|(ligand, _, bond)| (bond, ligand))
-            .min_by_key(|&(bond, ligand)| {
-                (!self.is_written[bond], self.above[bond].is_none(), is_shared(ligand), position[ligand])
-            })
-    }
-
-    /// Whether a ligand lies above its end of a double bond, if that is known.
-    fn side(&self, position: &[usize], end: usize, bond: usize, ligand: usize) -> Option<bool> {
-        self.above[bond].map(|above| above == (position[end] < position[ligand]))
-    }
-
-    /// Notes that a ligand lies above or below its end, and the other ligand opposite.
-    fn set_end(
-        &mut self,
-        molecule: &Molecule,
-        position: &[usize],
-        end: usize,
-        other: usize,
-        ligand: usize,
-        above: bool,
-    ) {
-        for (n, _, bond) in molecule.neighbours(end).filter(|&(n, _, _)| n != other) {
-            let side = if n == ligand { above } else { !above };
-            self.above[bond] = Some(side == (position[end] < position[n]));
-        }
-    }
+fn ends_of(molecule: &Molecule, bond: usize) -> (usize, usize) {
+    let (a, b, _) = molecule.bond(bond);
+    (a, b)
 }

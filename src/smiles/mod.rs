@@ -1,25 +1,30 @@
-//! SMILES: text to molecule and back.
+//! SMILES: a compound as one line of text, in and out.
 //!
-//! A subset that follows OpenSMILES where it overlaps; `grammar/smiles.abnf` says what is read.
-//! Text is cut into tokens ([`syntax`]), the tokens become a drawing ([`draft`]), the drawing a
-//! molecule with its hydrogens and configuration (`read`); [`error`] says what can be wrong and
-//! where. `write` goes the other way and is canonical.
+//! Text comes in and is parsed into a tree that keeps the byte range of every node
+//! ([`syntax`], [`parse`](mod@parse); the language is `grammar/smiles.abnf`). The tree is flattened
+//! into atoms and bonds, ring numbers joined (`sketch`). Then the chemistry is added:
+//! aromatic bonds (`aromatic`), implied hydrogens and valences (`valence`), configuration
+//! (`configure`); [`build`] runs these in order. [`write`](mod@write) goes back, with the
+//! direction marks of double bonds worked out in `marks`. What can be wrong with a text is in
+//! [`error`].
 //!
-//! # Example
-//! ```
-//! let cis = haloshed::smiles::read(r"Cl/C=C\Cl")?;
-//! assert_eq!(haloshed::smiles::write(&cis), r"Cl/C=C\Cl");
-//! # Ok::<(), haloshed::smiles::ReadError>(())
-//! ```
+//! # Source
+//! OpenSMILES specification, version 1.0 (2016-05-15), of which this is a subset: no isotopes,
+//! one component, eleven elements, `@` and `@@` at atoms with four ligands only.
 
-pub mod draft;
+mod aromatic;
+pub mod build;
+mod configure;
 pub mod error;
 mod marks;
-mod read;
+pub mod parse;
+mod sketch;
 pub mod syntax;
-mod write;
+mod valence;
+pub mod write;
 
-pub use draft::parse;
-pub use error::ReadError;
-pub use read::read;
+pub use build::read;
+pub use error::{ReadError, ReadErrorKind};
+pub use parse::parse;
+pub use syntax::SmilesText;
 pub use write::write;

@@ -1,270 +1,287 @@
-//! Writes canonical SMILES.
+//! Writes a molecule as canonical SMILES.
 //!
-//! Atoms are taken in canonical order: the text begins at the first that ends a chain, goes to lighter branches
-//! before heavier ones, and so is the same for every numbering of one compound. Configuration
-//! that is not real is left out.
+//! Atoms are numbered canonically first, and every later choice (where the text begins, which
+//! branch comes first, which bond closes a ring) looks at those numbers alone; so each
+//! compound has one text, however its atoms were numbered before.
+//!
+//! Invariant: what was written reads back as the same compound.
 
-use std::fmt::Write;
-
-use super::marks::Marks;
 use crate::molecule::canonical::canonical_order;
 use crate::molecule::{Atom, BondOrder, Element, Handedness, Identity, Ligand, Molecule};
 
-/// The canonical SMILES of a molecule.
+use super::marks::{self, Marks};
+use super::syntax::BondSymbol;
+use super::valence::implied_hydrogens;
+
+/// The canonical SMILES of a molecule, configuration included as far as it is given and real.
 ///
-/// Reading it gives the same compound, and every atom order of a molecule gives the same text.
+/// The same text for every numbering of the atoms. Configuration that tells no compounds apart
+/// is left out (see [`Molecule::keep_real_units`]). At most 99 rings are open at any place of a
+/// text that can be read back.
+///
+/// # Cost
+/// A canonical labelling, and another for each given unit that symmetry might make unreal.
 ///
 /// # Example
 /// ```
-/// let (a, b) = (haloshed::smiles::read("ClC=C(Cl)Cl")?, haloshed::smiles::read("C(Cl)(Cl)=CCl")?);
-/// assert_eq!(haloshed::smiles::write(&a), haloshed::smiles::write(&b));
-/// # Ok::<(), haloshed::smiles::ReadError>(())
+/// use haloshed::smiles::{read, write};
+///
+/// let one = read("C(Cl)(Cl)=C/Cl").unwrap();
+/// let other = read("Cl[CH]=C(Cl)(Cl)").unwrap();
+/// assert_eq!(write(&one), write(&other));
+/// assert_eq!(write(&read("F/C(=C(/F)Cl)Cl").unwrap()), write(&read("FC(/Cl)=C(/F)\\Cl").unwrap()));
 /// ```
 pub fn write(molecule: &Molecule) -> String {
     let mut pruned = molecule.clone();
     pruned.keep_real_units(Identity::Full);
-    if pruned.n_atoms() == 0 {
-        return String::new();
-    }
-    let order = canonical_order(&pruned);
-    let ordered = pruned.relabelled(&order);
-    let tree = Tree::of(&ordered);
-    let mut text = String::new();
-    match Marks::of(&ordered, &tree.position) {
-        Ok(marks) => Writer { molecule: &ordered, tree: &tree, marks: &marks }.atom(tree.start, &mut text),
-        Err(conflict) => {
-            // A ring of conjugated double bonds with hydrogens only: draw one of them.
-            let (end, other, _) = ordered.bond(conflict.bond);
-            return write_with_drawn_hydrogen(&ordered, end, other);
-        }
-    }
-    text
+    let numbered = pruned.relabelled(&canonical_order(&pruned));
+    let route = Route::through(&numbered);
+    let marks = marks::choose(&numbered, &route.position);
+    Text { molecule: &numbered, route: &route, marks: &marks, open: Vec::new(), out: String::new() }.written()
 }
 
-/// The text of a molecule in which the hydrogen at a double bond's end is drawn as an atom, so
-/// that it can carry a mark. Boron with no bonds to spare stands in for it while writing.
-fn write_with_drawn_hydrogen(molecule: &Molecule, end: usize, other: usize) -> String {
-    let bond = molecule.bond_between(end, other).expect("ends of a double bond");
-    let mut drawn = molecule.clone();
-    drawn.atom_mut(end).n_hydrogens = 0;
-    let stand_in =
-        drawn.add_atom(Atom { element: Element::B, charge: STAND_IN_CHARGE, n_hydrogens: 0, is_aromatic: false });
-    drawn.add_bond(end, stand_in, BondOrder::Single);
-    let tree = Tree::of(&drawn);
-    let mut text = String::new();
-    // The drawn hydrogen serves this double bond alone, so the marks can be met.
-    let mut free = drawn.clone();
-    free.set_geometry(bond, molecule.geometry(bond));
-    if let Ok(marks) = Marks::of(&free, &tree.position) {
-        Writer { molecule: &free, tree: &tree, marks: &marks }.atom(tree.start, &mut text);
-    }
-    text
-}
-
-/// A charge that no atom of a compound has: it marks the stand-in of a drawn hydrogen.
-const STAND_IN_CHARGE: i8 = i8::MIN;
-
-/// The order in which atoms are written: branches, and rings by the bonds that close them.
-struct Tree {
-    /// The atom written first: the first in canonical order that ends a chain.
-    start: usize,
-    children: Vec<Vec<usize>>,
+/// The way a text takes through a molecule.
+struct Route {
     parent: Vec<Option<usize>>,
-    /// By atom: ring bonds that open there, then those that close there, as (bond, number).
-    opening: Vec<Vec<(usize, u32)>>,
-    closing: Vec<Vec<(usize, u32)>>,
-    /// Place of each atom in the text.
+    /// Atoms after an atom, the continuation of its chain last.
+    children: Vec<Vec<usize>>,
+    /// Atoms before an atom that a ring bond leads back to, in the order of writing.
+    closed_at: Vec<Vec<usize>>,
+    /// Atoms after an atom that a ring bond leads forward to, in the order of writing.
+    opened_at: Vec<Vec<usize>>,
+    /// When an atom is written.
     position: Vec<usize>,
+    starts: Vec<usize>,
 }
 
-impl Tree {
-    fn of(molecule: &Molecule) -> Tree {
+impl Route {
+    fn through(molecule: &Molecule) -> Route {
         let n = molecule.n_atoms();
-        let mut tree = Tree {
-            start: 0,
-            children: vec![Vec::new(); n],
+        let mut route = Route {
             parent: vec![None; n],
-            opening: vec![Vec::new(); n],
-            closing: vec![Vec::new(); n],
+            children: vec![Vec::new(); n],
+            closed_at: vec![Vec::new(); n],
+            opened_at: vec![Vec::new(); n],
             position: vec![usize::MAX; n],
+            starts: Vec::new(),
         };
-        let mut is_seen = vec![false; n];
-        tree.start = (0..n).find(|&atom| molecule.degree(atom) <= 1).unwrap_or(0);
-        tree.grow(molecule, tree.start, &mut is_seen);
-        tree.sort_branches(tree.start);
+        let mut order: Vec<usize> = (0..n).collect();
+        order.sort_by_key(|&atom| (molecule.degree(atom) > 1, atom));
+        let mut seen = vec![false; n];
+        for start in order {
+            if !seen[start] {
+                route.starts.push(start);
+                let visited = route.walk(molecule, start, &mut seen);
+                route.sort_children(molecule, &visited);
+            }
+        }
+        route.number();
+        route
+    }
+
+    /// Walks depth first from `start` and gives the atoms in the order of the walk.
+    fn walk(&mut self, molecule: &Molecule, start: usize, seen: &mut [bool]) -> Vec<usize> {
+        let mut visited = vec![start];
+        seen[start] = true;
+        let mut stack = vec![(start, ways_from(molecule, start))];
+        while let Some((atom, ways)) = stack.last_mut() {
+            let atom = *atom;
+            let Some(next) = ways.pop() else {
+                stack.pop();
+                continue;
+            };
+            if !seen[next] {
+                seen[next] = true;
+                visited.push(next);
+                self.parent[next] = Some(atom);
+                self.children[atom].push(next);
+                stack.push((next, ways_from(molecule, next)));
+            } else if self.parent[atom] != Some(next) && stack.iter().any(|&(on_way, _)| on_way == next) {
+                self.closed_at[atom].push(next);
+                self.opened_at[next].push(atom);
+            }
+        }
+        visited
+    }
+
+    /// Small branches first.
+    fn sort_children(&mut self, molecule: &Molecule, visited: &[usize]) {
+        let mut size = vec![1usize; molecule.n_atoms()];
+        for &atom in visited.iter().rev() {
+            if let Some(parent) = self.parent[atom] {
+                size[parent] += size[atom];
+            }
+        }
+        for &atom in visited {
+            self.children[atom].sort_by_key(|&child| (size[child], child));
+        }
+    }
+
+    fn number(&mut self) {
+        let mut stack: Vec<usize> = self.starts.iter().rev().copied().collect();
         let mut next = 0;
-        tree.place(tree.start, &mut next);
-        tree.number_rings(molecule);
-        tree
-    }
-
-    fn grow(&mut self, molecule: &Molecule, atom: usize, is_seen: &mut [bool]) {
-        is_seen[atom] = true;
-        let mut around: Vec<usize> = molecule.neighbours(atom).map(|(n, _, _)| n).collect();
-        around.sort_unstable();
-        for n in around {
-            if !is_seen[n] {
-                self.parent[n] = Some(atom);
-                self.children[atom].push(n);
-                self.grow(molecule, n, is_seen);
-            }
+        while let Some(atom) = stack.pop() {
+            self.position[atom] = next;
+            next += 1;
+            stack.extend(self.children[atom].iter().rev());
         }
-    }
-
-    /// Puts lighter branches first; gives the size of the branch.
-    fn sort_branches(&mut self, atom: usize) -> usize {
-        let mut sized: Vec<(usize, usize)> =
-            self.children[atom].clone().into_iter().map(|child| (self.sort_branches(child), child)).collect();
-        sized.sort_unstable();
-        self.children[atom] = sized.iter().map(|&(_, child)| child).collect();
-        1 + sized.iter().map(|&(size, _)| size).sum::<usize>()
-    }
-
-    fn place(&mut self, atom: usize, next: &mut usize) {
-        self.position[atom] = *next;
-        *next += 1;
-        for child in self.children[atom].clone() {
-            self.place(child, next);
-        }
-    }
-
-    /// Gives each ring bond the smallest number that is free where it opens.
-    fn number_rings(&mut self, molecule: &Molecule) {
-        let mut rings: Vec<(usize, usize, usize)> = Vec::new();
-        for (bond, (a, b, _)) in molecule.bonds().enumerate() {
-            if self.parent[a] != Some(b) && self.parent[b] != Some(a) {
-                let (first, last) = if self.position[a] < self.position[b] { (a, b) } else { (b, a) };
-                rings.push((first, last, bond));
-            }
-        }
-        rings.sort_by_key(|&(first, last, _)| (self.position[first], self.position[last]));
-        let mut busy: Vec<(u32, usize)> = Vec::new();
-        for (first, last, bond) in rings {
-            busy.retain(|&(_, until)| until >= self.position[first]);
-            let most = busy.len() as u32 + 1;
-            let number = (1..=most).find(|n| busy.iter().all(|(taken, _)| taken != n)).unwrap_or(most);
-            busy.push((number, self.position[last]));
-            self.opening[first].push((bond, number));
-            self.closing[last].push((bond, number));
+        let position = &self.position;
+        for around in self.closed_at.iter_mut().chain(&mut self.opened_at) {
+            around.sort_by_key(|&other| position[other]);
         }
     }
 }
 
-struct Writer<'a> {
+/// Neighbours to go to, the first last.
+fn ways_from(molecule: &Molecule, atom: usize) -> Vec<usize> {
+    let mut ways: Vec<usize> = molecule.neighbours(atom).map(|(n, _, _)| n).collect();
+    ways.sort_unstable_by_key(|&n| std::cmp::Reverse(n));
+    ways
+}
+
+/// What is still to be written.
+enum Piece {
+    Atom(usize),
+    Open,
+    Close,
+}
+
+struct Text<'a> {
     molecule: &'a Molecule,
-    tree: &'a Tree,
+    route: &'a Route,
     marks: &'a Marks,
+    /// Ring bonds that are open, as (first atom, second atom), by ring number less one.
+    open: Vec<Option<(usize, usize)>>,
+    out: String,
 }
 
-impl Writer<'_> {
-    fn atom(&self, atom: usize, text: &mut String) {
-        self.symbol(atom, text);
-        for &(_, number) in &self.tree.closing[atom] {
-            ring_number(number, text);
-        }
-        for &(bond, number) in &self.tree.opening[atom] {
-            self.bond(bond, text);
-            ring_number(number, text);
-        }
-        let children = &self.tree.children[atom];
-        for (i, &child) in children.iter().enumerate() {
-            let is_branch = i + 1 < children.len();
-            if is_branch {
-                text.push('(');
+impl Text<'_> {
+    fn written(mut self) -> String {
+        for (i, &start) in self.route.starts.iter().enumerate() {
+            if i > 0 {
+                self.out.push('.');
             }
-            self.bond(self.molecule.bond_between(atom, child).expect("children are neighbours"), text);
-            self.atom(child, text);
-            if is_branch {
-                text.push(')');
+            self.component(start);
+        }
+        self.out
+    }
+
+    fn component(&mut self, start: usize) {
+        let mut stack = vec![Piece::Atom(start)];
+        while let Some(piece) = stack.pop() {
+            match piece {
+                Piece::Open => self.out.push('('),
+                Piece::Close => self.out.push(')'),
+                Piece::Atom(atom) => {
+                    if let Some(parent) = self.route.parent[atom] {
+                        self.bond(parent, atom);
+                    }
+                    self.atom(atom);
+                    self.rings(atom);
+                    self.hydrogen(atom);
+                    if let Some((&last, branches)) = self.route.children[atom].split_last() {
+                        stack.push(Piece::Atom(last));
+                        for &branch in branches.iter().rev() {
+                            stack.extend([Piece::Close, Piece::Atom(branch), Piece::Open]);
+                        }
+                    }
+                }
             }
         }
     }
 
-    fn bond(&self, bond: usize, text: &mut String) {
-        let (a, b, order) = self.molecule.bond(bond);
-        let both_aromatic = self.molecule.atom(a).is_aromatic && self.molecule.atom(b).is_aromatic;
-        match (order, self.marks.written(bond)) {
-            (_, Some(true)) => text.push('/'),
-            (_, Some(false)) => text.push('\\'),
-            (BondOrder::Double, _) => text.push('='),
-            (BondOrder::Triple, _) => text.push('#'),
-            (BondOrder::Single, _) if both_aromatic => text.push('-'),
-            (BondOrder::Single | BondOrder::Aromatic, _) => {}
-        }
+    fn bond(&mut self, first: usize, second: usize) {
+        let Some(bond) = self.molecule.bond_between(first, second) else { return };
+        let both_aromatic = self.molecule.atom(first).is_aromatic && self.molecule.atom(second).is_aromatic;
+        let symbol = match self.molecule.bond(bond).2 {
+            BondOrder::Single if both_aromatic => Some(BondSymbol::Single),
+            BondOrder::Single => self.marks.on_bond[bond],
+            BondOrder::Double => Some(BondSymbol::Double),
+            BondOrder::Triple => Some(BondSymbol::Triple),
+            BondOrder::Aromatic => None,
+        };
+        self.out.extend(symbol.map(BondSymbol::character));
     }
 
-    fn symbol(&self, atom: usize, text: &mut String) {
-        let a = self.molecule.atom(atom);
-        if a.charge == STAND_IN_CHARGE {
-            text.push_str("[H]");
+    fn atom(&mut self, index: usize) {
+        let atom = self.molecule.atom(index);
+        let symbol =
+            if atom.is_aromatic { atom.element.symbol().to_lowercase() } else { atom.element.symbol().to_owned() };
+        let chirality = self.chirality(index);
+        if chirality.is_none() && !self.needs_brackets(index) {
+            self.out.push_str(&symbol);
             return;
         }
-        let lower = if a.is_aromatic { a.element.symbol().to_lowercase() } else { a.element.symbol().to_owned() };
-        let handedness = self.handedness(atom);
-        if handedness.is_none() && self.is_plain(atom) {
-            text.push_str(&lower);
-            return;
-        }
-        text.push('[');
-        text.push_str(&lower);
-        text.push_str(match handedness {
-            Some(Handedness::Anticlockwise) => "@",
-            Some(Handedness::Clockwise) => "@@",
-            None => "",
-        });
-        match a.n_hydrogens {
-            0 => {}
-            1 => text.push('H'),
-            n => drop(write!(text, "H{n}")),
-        }
-        match a.charge {
-            0 => {}
-            1 => text.push('+'),
-            -1 => text.push('-'),
-            n => drop(write!(text, "{n:+}")),
-        }
-        text.push(']');
+        let hydrogens = match atom.n_hydrogens {
+            0 => String::new(),
+            1 => "H".to_owned(),
+            n => format!("H{n}"),
+        };
+        let charge = match atom.charge {
+            0 => String::new(),
+            1 => "+".to_owned(),
+            -1 => "-".to_owned(),
+            n => format!("{n:+}"),
+        };
+        let text = format!("[{symbol}{}{hydrogens}{charge}]", chirality.unwrap_or(""));
+        self.out.push_str(&text);
     }
 
-    /// Handedness in the order in which the ligands are written.
-    fn handedness(&self, atom: usize) -> Option<Handedness> {
-        self.molecule.handedness(atom)?;
-        let across = |bond: usize| {
-            let (a, b, _) = self.molecule.bond(bond);
-            Ligand::Neighbour(if a == atom { b } else { a })
-        };
-        let mut order: Vec<Ligand> = self.tree.parent[atom].map(Ligand::Neighbour).into_iter().collect();
-        order.extend((0..self.molecule.atom(atom).n_hydrogens).map(|_| Ligand::Hydrogen));
-        order.extend(self.tree.closing[atom].iter().chain(&self.tree.opening[atom]).map(|&(bond, _)| across(bond)));
-        order.extend(self.tree.children[atom].iter().map(|&child| Ligand::Neighbour(child)));
-        self.molecule.handedness_in(atom, &order)
+    fn needs_brackets(&self, index: usize) -> bool {
+        let Atom { element, n_hydrogens, is_aromatic, .. } = self.molecule.atom(index);
+        let hides_hydrogen = is_aromatic && element != Element::C && n_hydrogens > 0;
+        hides_hydrogen || implied_hydrogens(self.molecule, index, 0) != Some(n_hydrogens)
     }
 
-    /// Whether the atom may stand without a bracket: its hydrogens are those it would be given.
-    fn is_plain(&self, atom: usize) -> bool {
-        let a = self.molecule.atom(atom);
-        let used = self.molecule.valence_used(atom) - u32::from(a.n_hydrogens);
-        let lowest: &[u32] = match a.element {
-            Element::C => &[4],
-            Element::B | Element::N => &[3],
-            Element::P => &[3, 5],
-            Element::O => &[2],
-            Element::S => &[2, 4, 6],
-            Element::F | Element::Cl | Element::Br | Element::I => &[1],
-            Element::Si => &[],
-        };
-        let implied = if a.is_aromatic && a.element != Element::C && a.element != Element::B {
-            0
-        } else {
-            match lowest.iter().find(|&&v| v >= used) {
-                Some(v) => v - used,
-                None => return false,
+    /// `@` or `@@`, from the ligands in the order of writing.
+    fn chirality(&self, atom: usize) -> Option<&'static str> {
+        let before = self.route.parent[atom].map(Ligand::Neighbour);
+        let hydrogen = (self.molecule.atom(atom).n_hydrogens > 0).then_some(Ligand::Hydrogen);
+        let after = [&self.route.closed_at[atom], &self.route.opened_at[atom], &self.route.children[atom]];
+        let after = after.into_iter().flatten().map(|&n| Ligand::Neighbour(n));
+        let order: Vec<Ligand> = before.into_iter().chain(hydrogen).chain(after).collect();
+        self.molecule.handedness_in(atom, &order).map(|handedness| match handedness {
+            Handedness::Anticlockwise => "@",
+            Handedness::Clockwise => "@@",
+        })
+    }
+
+    fn rings(&mut self, atom: usize) {
+        let route = self.route;
+        let mut closed = Vec::new();
+        for &first in &route.closed_at[atom] {
+            if let Some(number) = self.open.iter().position(|&ring| ring == Some((first, atom))) {
+                self.ring_number(number + 1);
+                closed.push(number);
             }
-        };
-        a.charge == 0 && !lowest.is_empty() && implied == u32::from(a.n_hydrogens)
+        }
+        for &second in &route.opened_at[atom] {
+            let free = self.open.iter().position(Option::is_none).unwrap_or(self.open.len());
+            if free == self.open.len() {
+                self.open.push(None);
+            }
+            self.open[free] = Some((atom, second));
+            self.bond(atom, second);
+            self.ring_number(free + 1);
+        }
+        for number in closed {
+            self.open[number] = None;
+        }
     }
-}
 
-fn ring_number(number: u32, text: &mut String) {
-    let _ = if number < 10 { write!(text, "{number}") } else { write!(text, "%{number}") };
+    fn ring_number(&mut self, number: usize) {
+        if number > 9 {
+            self.out.push('%');
+        }
+        self.out.push_str(&number.to_string());
+    }
+
+    /// A hydrogen that bears a mark.
+    fn hydrogen(&mut self, atom: usize) {
+        if let Some(mark) = self.marks.on_hydrogen[atom] {
+            self.out.push('(');
+            self.out.push(mark.character());
+            self.out.push_str("[H])");
+        }
+    }
 }
