@@ -245,8 +245,8 @@ proptest::proptest! {
         let weight = place.max(1) as u8;
         let found = find(std::str::from_utf8(&number).unwrap());
         // One check digit can't see a change that its weight makes a multiple of ten.
-        let is_hidden = difference * weight % 10 == 0;
+        let is_hidden = (difference * weight).is_multiple_of(10);
         proptest::prop_assert_eq!(!is_hidden, matches!(found, Err(LookupError::CheckDigit { .. })));
-        proptest::prop_assert!(found != Ok(entry) || number.starts_with(b"0"));
+        proptest::prop_assert!(found != Ok(entry));
     }
 }
