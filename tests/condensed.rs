@@ -40,16 +40,16 @@ const FORMULAS: [(&str, &str); 44] = [
     ("Cl[C]Cl", ":CCl2"),
     ("[CH2]", ":CH2"),
     ("C[C]Cl", "CH3CCl:"),
-    ("[CH]CCl", ":CHCH2Cl"),
+    ("[CH]CCl", "CH2ClCH:"),
     ("[C-]#[O+]", "CO"),
     ("C=O", "HCHO"),
     ("CO", "CH3OH"),
     ("FC(F)(F)C(Cl)Br", "CHBrClCF3"),
-    ("ClCOCCl", "-"),
+    ("ClCOCCl", "CH2ClOCH2Cl"),
     ("ClC1CC1", "-"),
     ("c1ccccc1", "-"),
     ("C[N+](C)(C)CCl", "-"),
-    (r"Cl/C=C\C=C", "(Z)-CHCl=CHCH=CH2"),
+    (r"Cl/C=C\C=C", "cis-CH2=CHCH=CHCl"),
 ];
 
 fn check(smiles: &str, expected: &str) {

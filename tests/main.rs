@@ -2,6 +2,7 @@
 
 #![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
 
+mod commands;
 mod condensed;
 mod drawing;
 mod engines_agree;

@@ -2,16 +2,16 @@
 //!
 //! Texts and masses are made from a compound's molecule when it is asked for. Names and
 //! energies are asked of those who know them, through two small traits. What a step consumes
-//! and releases follows from the formulas at its two ends: halogens, oxygen, hydrogen and
-//! charge balance in one way only, as rules bring in nothing but water, protons and electrons.
+//! and releases follows from the formulas at its two ends.
 
 use std::borrow::Cow;
 
 use super::Records;
 use super::record::{ByHalogen, Caution, Compound, GibbsOrigin, Header, Step};
+use crate::molecule::Molecule;
 use crate::molecule::condensed::condensed;
-use crate::molecule::{Element, Molecule};
-use crate::network::{self, CompoundId, Network};
+use crate::network::half_reaction::between;
+use crate::network::{self, CompoundId, HalfReaction, Network};
 use crate::rules::Rule;
 use crate::smiles;
 
@@ -62,44 +62,7 @@ pub trait Energies {
     fn compound(&self, compound: CompoundId) -> CompoundEnergy;
 
     /// The energy of a step.
-    fn step(&self, step: &network::Step, reagents: &Reagents) -> StepEnergy;
-}
-
-/// What a step consumes and releases.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub struct Reagents {
-    /// Molecules of the starting compound.
-    pub molecules: u32,
-    /// Electrons consumed.
-    pub electrons: i32,
-    /// Protons consumed; negative when given off.
-    pub protons: i32,
-    /// Water consumed; negative when given off.
-    pub water: i32,
-    /// Halide ions released.
-    pub released: ByHalogen<u32>,
-}
-
-impl Reagents {
-    /// The reagents of a step from `molecules` of one compound to one of another.
-    pub fn between(from: &Molecule, to: &Molecule, molecules: u32) -> Reagents {
-        let n = molecules.cast_signed();
-        let (before, after) = (from.formula(), to.formula());
-        let gained = |of: fn(&crate::molecule::Formula) -> i32| of(&after) - n * of(&before);
-        let (a, b) = (halogens(from), halogens(to));
-        let lost = |a: u32, b: u32| (a * molecules).saturating_sub(b);
-        let released = ByHalogen {
-            fluorine: lost(a.fluorine, b.fluorine),
-            chlorine: lost(a.chlorine, b.chlorine),
-            bromine: lost(a.bromine, b.bromine),
-            iodine: lost(a.iodine, b.iodine),
-        };
-        let n_released: u32 = released.pairs().iter().map(|&(_, n)| n).sum();
-        let water = gained(|f| f.count(Element::O).cast_signed());
-        let protons = gained(|f| f.n_hydrogens().cast_signed()) - 2 * water;
-        let electrons = protons + n_released.cast_signed() - gained(crate::molecule::Formula::charge);
-        Reagents { molecules, electrons, protons, water, released }
-    }
+    fn step(&self, step: &network::Step, reaction: &HalfReaction) -> StepEnergy;
 }
 
 fn halogens(molecule: &Molecule) -> ByHalogen<u32> {
@@ -172,19 +135,21 @@ impl Assembled<'_> {
 
     fn step(&self, step: &network::Step, from: &Molecule) -> Step {
         let rule = &self.rules[step.rule];
-        let reagents = Reagents::between(from, &self.network.molecule(step.to), u32::from(rule.copies));
-        let energy = self.energies.step(step, &reagents);
+        let to = self.network.molecule(step.to);
+        let reaction = between(&from.formula(), &to.formula(), u32::from(rule.copies));
+        let energy = self.energies.step(step, &reaction);
+        let [fluorine, chlorine, bromine, iodine] = reaction.released.map(|n| n.max(0).cast_unsigned());
         Step {
             id: step.index as u32 + 1,
             from: step.from + 1,
             to: step.to + 1,
             rule: rule.name.clone(),
             degeneracy: step.degeneracy.to_f64(),
-            molecules: reagents.molecules,
-            electrons: reagents.electrons,
-            protons: reagents.protons,
-            water: reagents.water,
-            released: reagents.released,
+            molecules: reaction.n_reactants,
+            electrons: reaction.electrons,
+            protons: reaction.protons,
+            water: reaction.water,
+            released: ByHalogen { fluorine, chlorine, bromine, iodine },
             e_standard_volt: energy.e_standard_volt,
             e_volt: energy.e_volt,
             e_sd_volt: energy.e_sd_volt,

@@ -1,6 +1,6 @@
 //! Energies of a network's compounds and steps as records want them.
 
-use super::assemble::{CompoundEnergy, Energies, Reagents, StepEnergy};
+use super::assemble::{CompoundEnergy, Energies, StepEnergy};
 use super::explain::{Contribution, Explanation, Part};
 use super::record::GibbsOrigin;
 use crate::network::{CompoundId, HalfReaction, Network, Step};
@@ -39,17 +39,9 @@ impl Energies for Valued<'_> {
         }
     }
 
-    fn step(&self, step: &Step, reagents: &Reagents) -> StepEnergy {
-        let released = reagents.released.pairs().map(|(_, n)| n.cast_signed());
-        let reaction = HalfReaction {
-            n_reactants: reagents.molecules,
-            electrons: reagents.electrons,
-            protons: reagents.protons,
-            water: reagents.water,
-            released,
-        };
+    fn step(&self, step: &Step, reaction: &HalfReaction) -> StepEnergy {
         let ends = (step.from, step.to);
-        match potential(self.network, self.energies, self.scheme, &self.conditions, ends, &reaction) {
+        match potential(self.network, self.energies, self.scheme, &self.conditions, ends, reaction) {
             Err(missing) => StepEnergy { e_missing: Some(missing.to_string()), ..StepEnergy::default() },
             Ok(found) => StepEnergy {
                 e_standard_volt: found.volts.map(|v| v.standard),

@@ -173,7 +173,7 @@ fn group(molecule: &Molecule, atom: usize) -> String {
     let count = |symbol: &str, n: usize, text: &mut String| match n {
         0 => {}
         1 => text.push_str(symbol),
-        n => text.push_str(&format!("{symbol}{n}")),
+        n => text.extend([symbol.to_owned(), n.to_string()]),
     };
     count("H", molecule.atom(atom).n_hydrogens.into(), &mut text);
     for element in [Element::F, Element::Cl, Element::Br, Element::I] {

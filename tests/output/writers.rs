@@ -22,7 +22,7 @@ fn with_gaps() -> Network {
     network.compounds[1].gibbs_aq_kj_per_mol = None;
     network.compounds[1].gibbs_sd_kj_per_mol = None;
     network.compounds[1].gibbs_origin = GibbsOrigin::None;
-    network.compounds[1].gibbs_source = "no value for the group X (invented)".to_owned();
+    "no value for the group X (invented)".clone_into(&mut network.compounds[1].gibbs_source);
     network.steps[0].e_standard_volt = None;
     network.steps[0].e_volt = None;
     network.steps[0].e_sd_volt = None;
