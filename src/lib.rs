@@ -1,5 +1,6 @@
 //! Finds everything that a halogenated compound can turn into under reducing conditions.
 
+pub mod catalogue;
 pub mod frame;
 pub mod molecule;
 pub mod network;

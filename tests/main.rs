@@ -2,6 +2,7 @@
 
 #![allow(clippy::unwrap_used, reason = "a test that cannot go on should stop where it is")]
 
+mod catalogue;
 mod commands;
 mod condensed;
 mod drawing;
@@ -11,6 +12,7 @@ mod frame;
 mod network;
 mod output;
 mod outside;
+mod readme;
 mod reference;
 mod rule_files;
 mod rule_products;

@@ -1,13 +1,35 @@
 //! What the catalogue knows of a compound, as records want it.
 
-use haloshed::molecule::Molecule;
+use haloshed::catalogue::{by_smiles, cautions};
+use haloshed::molecule::{Identity, Molecule};
 use haloshed::output::assemble::{Entry, Registry};
+use haloshed::output::record::Caution;
+use haloshed::smiles;
 
 /// The shipped catalogue.
 pub(crate) struct Catalogue;
 
 impl Registry for Catalogue {
-    fn entry(&self, _smiles: &str, _molecule: &Molecule) -> Entry {
-        Entry::default()
+    fn entry(&self, text: &str, molecule: &Molecule) -> Entry {
+        let dangers = cautions(molecule, text).into_iter();
+        let cautions = dangers.map(|c| Caution { text: c.text.clone(), source: c.source.clone() }).collect();
+        // A racemate's row serves its enantiomers too: the table seldom tells them apart.
+        let row = by_smiles(text).or_else(|| by_smiles(&without_centres(molecule)));
+        match row {
+            None => Entry { cautions, ..Entry::default() },
+            Some(row) => Entry {
+                names: std::iter::once(&row.name).chain(&row.synonyms).cloned().collect(),
+                abbreviations: row.abbreviations.clone(),
+                cas: Some(row.cas.clone()),
+                cautions,
+            },
+        }
     }
+}
+
+/// Canonical SMILES without tetrahedral configuration.
+fn without_centres(molecule: &Molecule) -> String {
+    let mut plain = molecule.clone();
+    plain.keep_real_units(Identity::Geometric);
+    smiles::write(&plain)
 }

@@ -77,6 +77,11 @@ pub(crate) fn show(reports: &[Report], stderr: &mut io::Stderr) {
     }
 }
 
+/// Shows a note in one line.
+pub(crate) fn note(text: &str) {
+    let _ = writeln!(io::stderr(), "note: {text}");
+}
+
 /// Shows a warning in one line.
 pub(crate) fn warn(text: &str) {
     let _ = writeln!(io::stderr(), "warning: {text}");

@@ -1,5 +1,6 @@
 //! Checks against what others have worked out, a module a source.
 
 mod counts;
+mod masses;
 mod rdkit;
 mod steps;
