@@ -5,7 +5,8 @@
 //! asked for one ([`assemble`]), so that a large network is never in memory twice. A [`Writer`] turns records
 //! into one format; [`json`], [`jsonl`] and [`csv`] stream, [`table`], [`summary`] and [`dot`]
 //! are for reading. [`steps`] writes half-reactions, [`explain`] the parts of one Gibbs energy;
-//! [`valued`] is where the values of both come from.
+//! [`valued`] is where the values of both come from, [`known`] the names, [`header`] the
+//! warnings.
 //! [`file`](mod@file) is where they are written to. Numbers are rounded in [`decimals`] and nowhere else.
 //!
 //! Nothing here prints, and nothing here calculates chemistry.
@@ -17,8 +18,10 @@ pub mod dot;
 pub mod explain;
 pub mod file;
 pub mod format;
+pub mod header;
 pub mod json;
 pub mod jsonl;
+pub mod known;
 mod layout;
 pub mod record;
 pub mod rule_list;
