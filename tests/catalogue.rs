@@ -146,6 +146,13 @@ fn an_ambiguous_abbreviation_is_refused_with_its_choices() {
         "`DCE` is ambiguous: cDCE (cis-1,2-dichloroethene), tDCE (trans-1,2-dichloroethene) or 1,1-DCE (1,1-dichloroethene)",
         "give one of these, a CAS number or a SMILES",
     );
+    // An ethane to some, the ethenes to others.
+    check_error(
+        "1,2-DCE",
+        "`1,2-DCE` is ambiguous: cDCE (cis-1,2-dichloroethene), tDCE (trans-1,2-dichloroethene), 1,2-dichloroethene or \
+         1,2-DCA (1,2-dichloroethane)",
+        "give one of these, a CAS number or a SMILES",
+    );
     for text in ["tca", "DCA", "TeCA", "PCA", "dichloroethylene", "DCP", "1,3-DCP", "HFO-1234ze", "2-butene", "MC"] {
         assert!(resolve(text).unwrap_err().to_string().contains("is ambiguous"), "{text}");
     }
