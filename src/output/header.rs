@@ -17,7 +17,12 @@ pub enum Extent {
 
 /// The header of a network made by these rules, at these conditions.
 pub fn header(network: &Network, rules: &[Rule], conditions: &thermo::Conditions, extent: Extent) -> Header {
-    let warnings = [isomer_warning(network), cumulene_warning(network), limit_warning(network, extent)];
+    let warnings = [
+        isomer_warning(network),
+        idle_warning(network, rules),
+        cumulene_warning(network),
+        limit_warning(network, extent),
+    ];
     Header {
         format: FORMAT.to_owned(),
         program: Program::this(),
@@ -51,6 +56,12 @@ fn conditions_of(conditions: &thermo::Conditions) -> Conditions {
 fn isomer_warning(network: &Network) -> Option<String> {
     let n = network.parents().len();
     (n > 1).then(|| format!("the compound was given without its configuration: all {n} isomers are parents"))
+}
+
+/// Says that no rule acts on what was given, which is no finding about the compound.
+fn idle_warning(network: &Network, rules: &[Rule]) -> Option<String> {
+    let is_idle = network.n_steps() == 0 && network.outcome() == Outcome::Complete && !rules.is_empty();
+    is_idle.then(|| "none of the rules chosen acts on this compound; --with adds rules that are off".to_owned())
 }
 
 /// Says that cumulenes hide isomers.

@@ -4,7 +4,7 @@ use std::io;
 use std::time::Duration;
 
 use super::counts::Generation;
-use super::layout::{table, write_wrapped};
+use super::layout::{counted, table, write_wrapped};
 use super::{Records, Writer};
 
 /// Writes the counts of a network.
@@ -23,7 +23,8 @@ impl Writer for Summary {
         let n_compounds: usize = counts.generations.iter().map(|g| g.compounds).sum();
         let n_steps: usize = counts.n_steps_by_rule.iter().sum();
         let extent = if header.complete { "complete" } else { "INCOMPLETE: a limit was reached" };
-        writeln!(out, "{n_compounds} compounds, {n_steps} steps; {extent}")?;
+        let (compounds, steps) = (counted(n_compounds, "compound"), counted(n_steps, "step"));
+        writeln!(out, "{compounds}, {steps}; {extent}")?;
         writeln!(out, "At {}", header.conditions.text(counts.elements))?;
         for warning in &header.warnings {
             write_wrapped(&format!("Warning: {warning}"), 2, out)?;
