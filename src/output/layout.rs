@@ -69,3 +69,8 @@ impl Notes {
         Ok(())
     }
 }
+
+/// A number of things: `1 step`, `2 steps`.
+pub(super) fn counted(n: usize, thing: &str) -> String {
+    if n == 1 { format!("1 {thing}") } else { format!("{n} {thing}s") }
+}

@@ -3,7 +3,7 @@
 use std::io;
 use std::time::Duration;
 
-use super::layout::{table, write_wrapped};
+use super::layout::{counted, table, write_wrapped};
 use super::record::{ByHalogen, mark_elements};
 use super::{Records, Writer};
 
@@ -36,10 +36,10 @@ impl Writer for Summary {
     fn write(&self, network: &dyn Records, out: &mut dyn io::Write) -> io::Result<()> {
         let counts = Counts::of(network);
         let header = network.header();
-        let n_compounds: usize = counts.generations.iter().map(|g| g.compounds).sum();
-        let n_steps: usize = counts.n_steps_by_rule.iter().sum();
+        let compounds = counted(counts.generations.iter().map(|g| g.compounds).sum(), "compound");
+        let steps = counted(counts.n_steps_by_rule.iter().sum(), "step");
         let extent = if header.complete { "complete" } else { "INCOMPLETE: a limit was reached" };
-        writeln!(out, "{n_compounds} compounds, {n_steps} steps; {extent}")?;
+        writeln!(out, "{compounds}, {steps}; {extent}")?;
         writeln!(out, "At {}", header.conditions.text(counts.elements))?;
         for warning in &header.warnings {
             write_wrapped(&format!("Warning: {warning}"), 2, out)?;
@@ -50,7 +50,7 @@ impl Writer for Summary {
         let rows = by_rule.map(|(rule, n)| vec![rule.clone(), n.to_string()]).collect();
         writeln!(out, "\n{}", table(&["rule", "steps"], &[1], rows))?;
         if counts.n_without_value > 0 {
-            writeln!(out, "\n{} steps have no estimate", counts.n_without_value)?;
+            writeln!(out, "\n{} without an estimate", counted(counts.n_without_value, "step"))?;
         }
         self.write_times(out)
     }

@@ -6,7 +6,7 @@
 use std::io;
 
 use super::decimals::{degeneracy_text, kj_sd_text, kj_text, volt_sd_text, volt_text};
-use super::layout::{Notes, table, write_wrapped};
+use super::layout::{Notes, counted, table, write_wrapped};
 use super::record::{Compound, GibbsOrigin, Network, Step};
 use super::{Records, Writer};
 
@@ -59,9 +59,9 @@ pub(super) fn write_heading(network: &Network, out: &mut dyn io::Write) -> io::R
     let conditions = header.conditions.text(network.halogen_elements());
     write_wrapped(&format!("At {conditions}, organics at equal activity; potentials against SHE"), 2, out)?;
     write_wrapped(&format!("Rules: {}", header.rules.join(", ")), 2, out)?;
-    let (n_compounds, n_steps) = (network.compounds.len(), network.steps.len());
+    let (compounds, steps) = (counted(network.compounds.len(), "compound"), counted(network.steps.len(), "step"));
     let extent = if header.complete { "complete" } else { "INCOMPLETE: a limit was reached" };
-    writeln!(out, "{n_compounds} compounds, {n_steps} steps; {extent}")?;
+    writeln!(out, "{compounds}, {steps}; {extent}")?;
     header.warnings.iter().try_for_each(|warning| write_wrapped(&format!("Warning: {warning}"), 2, out))
 }
 
