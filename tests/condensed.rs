@@ -14,7 +14,7 @@ use haloshed::smiles::read;
 use proptest::prelude::*;
 
 /// SMILES with the formula expected; a dash where there is none.
-const FORMULAS: [(&str, &str); 56] = [
+const FORMULAS: [(&str, &str); 60] = [
     ("C", "CH4"),
     ("CC", "CH3CH3"),
     ("C=C", "CH2=CH2"),
@@ -70,6 +70,11 @@ const FORMULAS: [(&str, &str); 56] = [
     // The ligands differ in a branch only: CH2Cl and CH3 against CH2F and CH3.
     (r"CC(CCl)/C(C)=C(\Cl)C(F)F", "(Z)-CH2ClCH(CH3)C(CH3)=CClCHF2"),
     (r"Cl/C(F)=C(C(C)CCl)\C(C)CF", "(E)-CH2FCH(CH3)C(=CClF)CH(CH3)CH2Cl"),
+    // The same, its branches drawn in other orders.
+    (r"Cl/C(F)=C(C(CCl)C)\C(C)CF", "(E)-CH2FCH(CH3)C(=CClF)CH(CH3)CH2Cl"),
+    (r"Cl/C(F)=C(C(CCl)C)\C(CF)C", "(E)-CH2FCH(CH3)C(=CClF)CH(CH3)CH2Cl"),
+    (r"Cl/C(F)=C(C(C)CCl)\C(CF)C", "(E)-CH2FCH(CH3)C(=CClF)CH(CH3)CH2Cl"),
+    (r"C(CF)(C)\C(C(C)CCl)=C(F)\Cl", "(Z)-CH2FCH(CH3)C(=CClF)CH(CH3)CH2Cl"),
     // One letter for each of three side chains would not say which is which.
     (r"Cl/C=C\CC(C/C=C\Cl)C/C=C/Cl", "-"),
     ("ClCC[CH-]CCl", "-"),

@@ -16,6 +16,7 @@ mod readme;
 mod reference;
 mod rule_files;
 mod rule_products;
+mod rule_sentences;
 mod sentences;
 mod smiles;
 mod thermo;

@@ -152,7 +152,8 @@ impl Molecule {
     pub fn keep_real_units(&mut self, identity: Identity) {
         let candidates = self.candidate_units();
         self.clear_all_but(&candidates, identity);
-        self.drop_idle_units(&candidates);
+        // A unit may be idle only once another is forgotten, where some were left open.
+        while self.drop_idle_units(&candidates) {}
     }
 
     /// Forgets configuration at all units but these, and where the identity does not tell it.
@@ -169,11 +170,12 @@ impl Molecule {
         }
     }
 
-    /// Forgets the given units that tell nothing, a class of alike ones at a time.
-    fn drop_idle_units(&mut self, candidates: &[Unit]) {
+    /// Forgets the given units that tell nothing, a class of alike ones at a time. Says whether
+    /// there were any.
+    fn drop_idle_units(&mut self, candidates: &[Unit]) -> bool {
         let given: Vec<Unit> = candidates.iter().copied().filter(|&u| self.is_given(u)).collect();
         if given.is_empty() {
-            return;
+            return false;
         }
         let classes = super::canonical::refined_classes(self);
         let code = canonical_code(self);
@@ -190,9 +192,10 @@ impl Molecule {
                 idle = both;
             }
         }
-        for unit in idle {
+        for &unit in &idle {
             self.clear_unit(unit);
         }
+        !idle.is_empty()
     }
 
     fn class_of(&self, unit: Unit, classes: &[usize]) -> (usize, usize) {

@@ -10,7 +10,7 @@ use super::configure::{configure, order_of};
 use super::error::{ReadError, ReadErrorKind};
 use super::parse::parse;
 use super::sketch::{Sketch, SketchBond, flatten};
-use super::syntax::{AtomText, Symbol};
+use super::syntax::{AtomText, BondSymbol, Symbol};
 use super::{aromatic, valence};
 
 /// Reads a compound.
@@ -116,6 +116,10 @@ fn bond_order(molecule: &Molecule, bond: &SketchBond, a: usize, b: usize) -> Res
     match &bond.symbol {
         None if both_aromatic => Ok(BondOrder::Aromatic),
         None => Ok(BondOrder::Single),
+        // A mark for a double bond outside the ring says nothing of the ring's own bond.
+        Some(symbol) if both_aromatic && matches!(symbol.value, BondSymbol::Up | BondSymbol::Down) => {
+            Ok(BondOrder::Aromatic)
+        }
         Some(symbol) => match order_of(symbol.value) {
             BondOrder::Aromatic if !both_aromatic => {
                 Err(ReadError { kind: ReadErrorKind::AromaticBond, span: symbol.span.clone() })

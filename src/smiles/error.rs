@@ -49,13 +49,13 @@ pub enum ReadErrorKind {
     ShortRingNumber,
     #[error("isotopes are not told apart")]
     Isotope,
-    #[error("more than one component")]
+    #[error("found `.`: a compound is one molecule")]
     SeveralComponents,
-    #[error("wildcard atom")]
+    #[error("found `*`: every atom must be known")]
     Wildcard,
-    #[error("atom class")]
+    #[error("atom classes are not used here")]
     AtomClass,
-    #[error("quadruple bond")]
+    #[error("found `$`: a compound has no quadruple bonds")]
     QuadrupleBond,
     #[error("configuration other than tetrahedral: `{written}`")]
     OtherConfiguration { written: String },
@@ -89,7 +89,7 @@ pub enum ReadErrorKind {
     NotAlternating { has_bare_nitrogen: bool },
     #[error("marks put two ligands of one double-bonded atom on one side")]
     ContradictoryMarks,
-    #[error("configuration at {} with {n_ligands} {}", element.name(), if *n_ligands == 1 { "ligand" } else { "ligands" })]
+    #[error("`@` at {} with {n_ligands} {}, not four", element.name(), if *n_ligands == 1 { "ligand" } else { "ligands" })]
     NotFourLigands { element: Element, n_ligands: usize },
 }
 
@@ -159,7 +159,7 @@ impl ReadError {
             Kind::EmptyBranch => "a branch holds at least one atom",
             Kind::MisplacedRingNumber => "ring numbers stand directly after their atom, before its branches",
             Kind::ShortRingNumber => "write %10 to %99; numbers below ten need no `%`",
-            Kind::Isotope => "leave the mass number out",
+            Kind::Isotope => "leave the mass number out: C instead of 13C",
             Kind::SeveralComponents => "give one compound at a time, without counter-ions",
             Kind::Wildcard => "write the atom that is meant",
             Kind::AtomClass => "leave the `:` and its number out",

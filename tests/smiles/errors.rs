@@ -59,12 +59,17 @@ fn limits_are_named() {
 
 #[test]
 fn what_is_outside_the_subset() {
-    check("[13CH4]", " ^^", "isotopes are not told apart", "leave the mass number out");
-    check("CCl.Cl", "   ^", "more than one component", "give one compound at a time, without counter-ions");
-    check("C*", " ^", "wildcard atom", "write the atom that is meant");
-    check("[*]C", " ^", "wildcard atom", "write the atom that is meant");
-    check("[CH3:1]C", "    ^^", "atom class", "leave the `:` and its number out");
-    check("C$C", " ^", "quadruple bond", "the highest bond order is three, `#`");
+    check("[13CH4]", " ^^", "isotopes are not told apart", "leave the mass number out: C instead of 13C");
+    check(
+        "CCl.Cl",
+        "   ^",
+        "found `.`: a compound is one molecule",
+        "give one compound at a time, without counter-ions",
+    );
+    check("C*", " ^", "found `*`: every atom must be known", "write the atom that is meant");
+    check("[*]C", " ^", "found `*`: every atom must be known", "write the atom that is meant");
+    check("[CH3:1]C", "    ^^", "atom classes are not used here", "leave the `:` and its number out");
+    check("C$C", " ^", "found `$`: a compound has no quadruple bonds", "the highest bond order is three, `#`");
     let tetrahedral = "tetrahedral configuration is written @ or @@";
     check("C[C@TH1](F)Cl", "   ^^^^", "configuration other than tetrahedral: `@TH1`", tetrahedral);
 }
@@ -139,7 +144,7 @@ fn configuration_that_cannot_be() {
     let turn = "turn one of the two marks around, or leave it out";
     check("F/C(\\Cl)=C/F", "    ^", "marks put two ligands of one double-bonded atom on one side", turn);
     let leave = "leave the mark out; configuration is kept at atoms with four ligands";
-    check("C[C@]#CF", "   ^", "configuration at carbon with 2 ligands", leave);
-    check("C[S@](=O)CC", "   ^", "configuration at sulfur with 3 ligands", leave);
-    check("N[C@@](F)=C", "   ^^", "configuration at carbon with 3 ligands", leave);
+    check("C[C@]#CF", "   ^", "`@` at carbon with 2 ligands, not four", leave);
+    check("C[S@](=O)CC", "   ^", "`@` at sulfur with 3 ligands, not four", leave);
+    check("N[C@@](F)=C", "   ^^", "`@` at carbon with 3 ligands, not four", leave);
 }

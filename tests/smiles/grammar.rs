@@ -20,7 +20,7 @@ fn points_inside(text: &str) -> Result<(), TestCaseError> {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig::with_cases(2000))]
+    #![proptest_config(ProptestConfig::with_cases(1500))]
 
     #[test]
     fn every_sentence_of_the_grammar_is_parsed(sentence in sentences(GRAMMAR, "smiles")) {

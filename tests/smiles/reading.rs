@@ -100,6 +100,7 @@ fn marks_where_there_is_no_geometry_are_dropped() {
     for (text, plain) in [
         ("C/C", "CC"),
         ("C=C(/C)/C", "C=C(C)C"),
+        ("[nH]1/c(=N/C)[nH]c(=N)nc1Cl", "[nH]1c(=NC)[nH]c(=N)nc1Cl"),
         ("C/C=C", "CC=C"),
         (r"C/C=C(\C)/C", "CC=C(C)C"),
         ("C/C=N/O", "CC=NO"),

@@ -9,6 +9,8 @@ use proptest::prelude::*;
 
 use super::molecules::{configured, molecules, shuffled};
 
+const N_CASES: u32 = 1000;
+
 fn pruned_code(molecule: &Molecule) -> Vec<u32> {
     let mut pruned = molecule.clone();
     pruned.keep_real_units(Identity::Full);
@@ -20,7 +22,7 @@ fn are_isomorphic(a: &Molecule, b: &Molecule) -> bool {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig::with_cases(1500))]
+    #![proptest_config(ProptestConfig::with_cases(N_CASES))]
 
     #[test]
     fn what_was_written_reads_back(molecule in configured()) {
@@ -48,44 +50,42 @@ proptest! {
     }
 
     #[test]
-    fn moving_one_bond_is_noticed(molecule in molecules(), at in any::<prop::sample::Index>(), to in any::<prop::sample::Index>()) {
+    fn moving_a_halogen_is_noticed(molecule in molecules(), at in any::<prop::sample::Index>(), to in any::<prop::sample::Index>()) {
         let halogens: Vec<usize> =
             (0..molecule.n_atoms()).filter(|&a| molecule.leaving_halogen(a).is_some()).collect();
         let with_hydrogen: Vec<usize> =
             (0..molecule.n_atoms()).filter(|&a| molecule.atom(a).n_hydrogens > 0).collect();
-        prop_assume!(!halogens.is_empty() && !with_hydrogen.is_empty());
+        if halogens.is_empty() || with_hydrogen.is_empty() {
+            return Ok(());
+        }
         let moved = with_halogen_moved(&molecule, *at.get(&halogens), *to.get(&with_hydrogen));
         prop_assert_eq!(canonical_code(&molecule) == canonical_code(&moved), are_isomorphic(&molecule, &moved));
         prop_assert_eq!(write(&molecule) == write(&moved), are_isomorphic(&molecule, &moved));
     }
 }
 
-/// The molecule with a halogen on another atom.
+/// One bridgehead given and the other open: once the first turns out to tell nothing, the
+/// centre between them tells nothing either.
+#[test]
+fn what_is_left_out_makes_other_configuration_idle() {
+    let open = write(&read("N#CC1(Cl)C23CC12C3").unwrap());
+    assert_eq!(write(&read("N#C[C@]1(Cl)[C@]23CC12C3").unwrap()), open);
+    assert_eq!(write(&read("N#C[C@]1(Cl)C23CC12C3").unwrap()), open);
+}
+
+/// The molecule with a halogen in the place of a hydrogen of `target`.
 fn with_halogen_moved(molecule: &Molecule, halogen: usize, target: usize) -> Molecule {
     let mut out = Molecule::new();
     for atom in molecule.atoms() {
         out.add_atom(atom);
     }
     for (a, b, order) in molecule.bonds() {
-        let (a, b) = if a == halogen {
-            (target, b)
-        } else if b == halogen {
-            (a, target)
-        } else {
-            (a, b)
-        };
-        if (a, b) == (target, target) || [a, b] == [target, target] {
-            continue;
-        }
-        let touches = |end: usize| molecule.bond_between(halogen, end).is_some();
-        if a == target && touches(b) && molecule.bond_between(target, b).is_none()
-            || b == target && touches(a) && molecule.bond_between(target, a).is_none()
-        {
-            let source = if a == target { b } else { a };
+        if a == halogen || b == halogen {
+            let source = if a == halogen { b } else { a };
             out.atom_mut(source).n_hydrogens += 1;
             out.atom_mut(target).n_hydrogens -= 1;
             out.add_bond(target, halogen, order);
-        } else if out.bond_between(a, b).is_none() {
+        } else {
             out.add_bond(a, b, order);
         }
     }
