@@ -7,16 +7,17 @@ use std::time::{Duration, Instant};
 
 use clap::{Args, ValueEnum};
 use haloshed::molecule::{self, Molecule};
-use haloshed::network::{CompoundId, Limit, Limits, Network, Outcome, enumerate};
+use haloshed::network::{CompoundId, Limits, Network, enumerate};
 use haloshed::output::assemble::{Assembled, Registry};
-use haloshed::output::record::{Conditions, FORMAT, Header, Identity, Program};
+use haloshed::output::header::{self, header};
+use haloshed::output::known::Catalogue;
+use haloshed::output::record::Header;
 use haloshed::output::valued::Valued;
 use haloshed::rules::Rule;
 use haloshed::smiles;
-use haloshed::thermo;
+use haloshed::thermo::{self, Conditions};
 
 use super::failure::Failure;
-use super::known::Catalogue;
 use super::report::Report;
 
 /// What a network is asked for.
@@ -46,7 +47,7 @@ pub(crate) struct Built {
     rules: Vec<Rule>,
     header: Header,
     energies: thermo::Energies,
-    conditions: thermo::Conditions,
+    conditions: Conditions,
     /// Time that the enumeration took.
     pub(crate) enumeration: Duration,
     /// Time that the energies took.
@@ -93,12 +94,13 @@ impl IdentityChoice {
             IdentityChoice::Full => molecule::Identity::Full,
         }
     }
+}
 
-    fn of_records(self) -> Identity {
+impl Extent {
+    fn of_headers(self) -> header::Extent {
         match self {
-            IdentityChoice::Constitutional => Identity::Constitutional,
-            IdentityChoice::Geometric => Identity::Geometric,
-            IdentityChoice::Full => Identity::Full,
+            Extent::Whole(_) => header::Extent::Whole,
+            Extent::FirstSteps => header::Extent::FirstSteps,
         }
     }
 }
@@ -113,27 +115,11 @@ pub(crate) fn build_network(request: NetworkRequest) -> Result<Built, Failure> {
     };
     let network = enumerate(&[parent], &rules, identity.of_molecules(), limits, n_threads.get())
         .map_err(|error| Report::plain(error.to_string()))?;
-    let header = Header {
-        format: FORMAT.to_owned(),
-        program: Program::this(),
-        parents: network.parents().map(|id| id + 1).collect(),
-        identity: identity.of_records(),
-        conditions,
-        rules: rules.iter().map(|rule| rule.name.clone()).collect(),
-        complete: network.outcome() == Outcome::Complete,
-        warnings: isomer_warning(&network).into_iter().chain(limit_warning(&network, extent)).collect(),
-    };
     let enumeration = started.elapsed();
     let energies = thermo::energies(&network, thermo::shipped(), n_threads.get());
     let valuation = started.elapsed().saturating_sub(enumeration);
-    let conditions = conditions_of(&header)?;
+    let header = header(&network, &rules, &conditions, extent.of_headers());
     Ok(Built { network, rules, header, energies, conditions, enumeration, valuation })
-}
-
-/// The conditions of the header, checked.
-fn conditions_of(header: &Header) -> Result<thermo::Conditions, Failure> {
-    let halides = header.conditions.halide_mol_per_litre.pairs().map(|(_, activity)| activity);
-    thermo::Conditions::new(header.conditions.ph, halides).map_err(|error| Report::plain(error.to_string()).into())
 }
 
 impl Built {
@@ -181,35 +167,5 @@ impl Built {
             registry: &Catalogue,
             energies: valued,
         }
-    }
-}
-
-/// Says that the parent stands for several isomers.
-fn isomer_warning(network: &Network) -> Option<String> {
-    let n = network.parents().len();
-    (n > 1).then(|| format!("the compound was given without its configuration: all {n} isomers are parents"))
-}
-
-/// Says that a limit was reached, if it was one of the user's or the program's and not part of
-/// what was asked.
-fn limit_warning(network: &Network, extent: Extent) -> Option<String> {
-    let Outcome::Cut { limit, first_unexpanded } = network.outcome() else { return None };
-    if extent == Extent::FirstSteps && matches!(limit, Limit::Generation(_)) {
-        return None;
-    }
-    let n_left = network.n_compounds() - first_unexpanded;
-    let (compounds, option) = (if n_left == 1 { "compound" } else { "compounds" }, option_of(limit));
-    Some(format!(
-        "the network is incomplete: {limit} was reached, and {n_left} {compounds} from id {} on were not followed \
-         further; raise {option} to go on",
-        first_unexpanded + 1
-    ))
-}
-
-fn option_of(limit: Limit) -> &'static str {
-    match limit {
-        Limit::Compounds(_) => "--max-compounds",
-        Limit::Generation(_) => "--max-generation",
-        Limit::Time(_) => "--time-limit",
     }
 }

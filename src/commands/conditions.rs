@@ -1,12 +1,11 @@
 //! Options for the conditions of the water.
 
 use clap::Args;
-use haloshed::output::record::{ByHalogen, Conditions};
+use haloshed::thermo::Conditions;
 
+use super::failure::Failure;
 use super::quantity::{concentration_mol_per_litre, ph};
-
-/// Temperature of the standard state, and the only one there is data for so far.
-const TEMPERATURE_KELVIN: f64 = 298.15;
+use super::report::Report;
 
 #[derive(Debug, Args)]
 #[command(next_help_heading = "Conditions")]
@@ -38,9 +37,8 @@ pub(crate) struct ConditionArgs {
 
 impl ConditionArgs {
     /// The conditions, at 25 °C.
-    pub(crate) fn conditions(&self) -> Conditions {
-        let halide_mol_per_litre =
-            ByHalogen { fluorine: self.fluoride, chlorine: self.chloride, bromine: self.bromide, iodine: self.iodide };
-        Conditions { temperature_kelvin: TEMPERATURE_KELVIN, ph: self.ph, halide_mol_per_litre }
+    pub(crate) fn conditions(&self) -> Result<Conditions, Failure> {
+        let halides = [self.fluoride, self.chloride, self.bromide, self.iodide];
+        Conditions::new(self.ph, halides).map_err(|error| Report::plain(error.to_string()).into())
     }
 }

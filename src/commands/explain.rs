@@ -2,7 +2,7 @@
 
 use clap::Args;
 use haloshed::output::explain::{Explanation, write_explanation};
-use haloshed::output::record::{ByHalogen, Conditions};
+use haloshed::thermo::Conditions;
 
 use super::build::{BuildArgs, Extent, NetworkRequest, build_network};
 use super::compound::read_compound;
@@ -24,13 +24,6 @@ pub(crate) struct ExplainArgs {
     build: BuildArgs,
 }
 
-/// An energy of formation asks for no conditions; these are the trade's usual ones.
-const USUAL: Conditions = Conditions {
-    temperature_kelvin: 298.15,
-    ph: 7.0,
-    halide_mol_per_litre: ByHalogen { fluorine: 1e-3, chlorine: 1e-3, bromine: 1e-3, iodine: 1e-3 },
-};
-
 /// Runs the command.
 pub(crate) fn run(args: &ExplainArgs) -> Result<Ending, Failure> {
     let request = NetworkRequest {
@@ -40,7 +33,7 @@ pub(crate) fn run(args: &ExplainArgs) -> Result<Ending, Failure> {
         identity: args.build.identity,
         extent: Extent::FirstSteps,
         n_threads: args.build.n_threads(),
-        conditions: USUAL,
+        conditions: Conditions::default(),
     };
     let built = build_network(request)?;
     let valued = built.valued();

@@ -11,7 +11,6 @@ mod conditions;
 mod destination;
 mod explain;
 mod failure;
-mod known;
 mod network;
 mod quantity;
 mod refit;

@@ -117,7 +117,7 @@ pub(crate) fn run(args: &NetworkArgs) -> Result<Ending, Failure> {
         identity: args.build.identity,
         extent: Extent::Whole(args.limits.limits()),
         n_threads: args.build.n_threads(),
-        conditions: args.conditions.conditions(),
+        conditions: args.conditions.conditions()?,
     };
     let plan = Plan::open(args)?;
     let built = build_network(request)?;

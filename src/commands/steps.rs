@@ -41,7 +41,7 @@ pub(crate) fn run(args: &StepsArgs) -> Result<Ending, Failure> {
         identity: args.build.identity,
         extent: Extent::FirstSteps,
         n_threads: args.build.n_threads(),
-        conditions: args.conditions.conditions(),
+        conditions: args.conditions.conditions()?,
     };
     let built = build_network(request)?;
     built.header().warnings.iter().for_each(|text| warn(text));

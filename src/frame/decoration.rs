@@ -88,7 +88,7 @@ impl Decoration {
     }
 
     /// Whether the ligands a site holds besides its skeleton neighbours are all different.
-    fn has_distinct_ligands(&self, frame: &Frame, site: usize) -> bool {
+    pub fn has_distinct_ligands(&self, frame: &Frame, site: usize) -> bool {
         self.n_hydrogens(frame, site) <= 1 && self.halogens[site].iter().all(|&n| n <= 1)
     }
 

@@ -4,6 +4,7 @@
 //! network is), [`enumerate`](mod@enumerate) (how it is made; [`states`] and `outside` help),
 //! [`half_reaction`] (what a step takes up and gives off) and [`graph`] (petgraph's traits).
 
+mod cumulenes;
 pub mod enumerate;
 pub mod graph;
 pub mod half_reaction;

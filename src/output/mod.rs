@@ -5,20 +5,24 @@
 //! asked for one ([`assemble`]), so that a large network is never in memory twice. A [`Writer`] turns records
 //! into one format; [`json`], [`jsonl`] and [`csv`] stream, [`table`], [`summary`] and [`dot`]
 //! are for reading. [`steps`] writes half-reactions, [`explain`] the parts of one Gibbs energy;
-//! [`valued`] is where the values of both come from.
+//! [`valued`] is where the values of both come from, [`known`] the names, [`header`] the
+//! warnings.
 //! [`file`](mod@file) is where they are written to. Numbers are rounded in [`decimals`] and nowhere else.
 //!
 //! Nothing here prints, and nothing here calculates chemistry.
 
 pub mod assemble;
+pub mod counts;
 pub mod csv;
 pub mod decimals;
 pub mod dot;
 pub mod explain;
 pub mod file;
 pub mod format;
+pub mod header;
 pub mod json;
 pub mod jsonl;
+pub mod known;
 mod layout;
 pub mod record;
 pub mod rule_list;
@@ -30,6 +34,7 @@ pub mod valued;
 use std::borrow::Cow;
 use std::io;
 
+use counts::Counts;
 use record::{Compound, Header, Network, Step};
 
 /// A network as records, made one by one.
@@ -44,6 +49,11 @@ pub trait Records {
 
     /// The steps, in order of id.
     fn steps(&self) -> Box<dyn Iterator<Item = Cow<'_, Step>> + '_>;
+
+    /// Numbers of the network; made without records where that is faster.
+    fn counts(&self) -> Counts {
+        Counts::of(self.header(), self.compounds(), self.steps())
+    }
 }
 
 impl Records for Network {

@@ -39,6 +39,10 @@ impl Energies for Valued<'_> {
         }
     }
 
+    fn has_value(&self, step: &Step, n_reactants: u32) -> bool {
+        self.energies.has_value(step.from, step.to, n_reactants)
+    }
+
     fn step(&self, step: &Step, reaction: &HalfReaction) -> StepEnergy {
         let ends = (step.from, step.to);
         match potential(self.network, self.energies, self.scheme, &self.conditions, ends, reaction) {

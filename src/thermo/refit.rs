@@ -5,7 +5,7 @@ use std::fmt::Write;
 
 use super::data::{Quantity, Row, Value, combine, group, rows};
 use super::estimate::{Estimator, symmetry_entropy};
-use super::features;
+use super::features::{self, FrameFacts};
 use super::fit::{Class, Fit, Observation, fit};
 use crate::frame::{Canonicaliser, Decoration, Frame, Layout};
 use crate::molecule::{Element, Halogen, Identity, Molecule};
@@ -118,7 +118,7 @@ impl Compound {
         let frame = Frame::of(&molecule);
         let state = frame.decompose(&molecule);
         let is_told = molecule.isomers(Identity::Geometric, 64).is_ok_and(|isomers| isomers.len() == 1);
-        let groups = Estimator::new(&frame, is_told).groups(&state);
+        let groups = Estimator::new(&frame, &FrameFacts::of(&frame), is_told).groups(&state);
         Compound { molecule, frame, state, groups }
     }
 

@@ -121,12 +121,19 @@ fn a_large_figure_is_given_with_a_warning() {
     assert!(stderr.contains("cannot be read on one page"), "{stderr}");
 }
 
+#[test]
+fn hidden_isomers_of_cumulenes_are_told() {
+    // CHCl=C=C=CHCl has a cis and a trans form that are not told apart.
+    let (_, stderr) = run(&["network", "ClC(Cl)=C(Cl)C(Cl)=C(Cl)Cl", "--format", "summary"], 0);
+    assert!(stderr.contains("cumulene whose configuration is not told apart"), "{stderr}");
+}
+
 /// The reader goes away after one byte; the program ends quietly.
 #[test]
 fn a_closed_pipe_ends_quietly() {
     let program = assert_cmd::cargo::cargo_bin!("haloshed");
     let mut child = std::process::Command::new(program)
-        .args(["network", "ClC(Cl)=C(Cl)C(Cl)=C(Cl)Cl", "--format", "json"])
+        .args(["network", "ClC(Cl)(Cl)C(Cl)(Cl)C(Cl)(Cl)Cl", "--format", "json"])
         .stdout(Stdio::piped())
         .stderr(Stdio::piped())
         .spawn()

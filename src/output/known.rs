@@ -1,13 +1,14 @@
 //! What the catalogue knows of a compound, as records want it.
 
-use haloshed::catalogue::{by_smiles, cautions};
-use haloshed::molecule::{Identity, Molecule};
-use haloshed::output::assemble::{Entry, Registry};
-use haloshed::output::record::Caution;
-use haloshed::smiles;
+use crate::catalogue::{by_smiles, cautions};
+use crate::molecule::{Identity, Molecule};
+use crate::smiles;
+
+use super::assemble::{Entry, Registry};
+use super::record::Caution;
 
 /// The shipped catalogue.
-pub(crate) struct Catalogue;
+pub struct Catalogue;
 
 impl Registry for Catalogue {
     fn entry(&self, text: &str, molecule: &Molecule) -> Entry {
