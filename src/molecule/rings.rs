@@ -233,9 +233,13 @@ mod tests {
             ring.push((0, n));
             let mut adjacency = graph(n + 1, &ring);
             assert_eq!(smallest_ring_sizes(&adjacency), [n]);
-            adjacency.iter_mut().for_each(|around| around.sort_unstable());
+            for around in &mut adjacency {
+                around.sort_unstable();
+            }
             assert_eq!(smallest_ring_sizes(&adjacency), [n]);
-            adjacency.iter_mut().for_each(|around| around.reverse());
+            for around in &mut adjacency {
+                around.reverse();
+            }
             assert_eq!(smallest_ring_sizes(&adjacency), [n]);
         }
     }

@@ -35,7 +35,7 @@ impl Writer for Summary {
         let rows = by_rule.map(|(rule, n)| vec![rule.clone(), n.to_string()]).collect();
         writeln!(out, "\n{}", table(&["rule", "steps"], &[1], rows))?;
         if counts.n_without_value > 0 {
-            writeln!(out, "\n{} steps have no estimate", counts.n_without_value)?;
+            writeln!(out, "\n{} without an estimate", counted(counts.n_without_value, "step"))?;
         }
         self.write_times(out)
     }

@@ -147,6 +147,26 @@ fn a_closed_pipe_ends_quietly() {
 }
 
 #[test]
+fn no_part_of_a_missing_energy_is_given_as_a_value() {
+    let (stdout, _) = run(&["explain", "COP(=O)(OC)OC=C(Cl)Cl"], 0);
+    for quantity in ["enthalpy of formation, ideal gas", "standard entropy, ideal gas", "log10 of the Henry solubility"]
+    {
+        assert!(stdout.contains(&format!("\n{quantity}: no value (groups with oxygen, phosphorus")), "{stdout}");
+    }
+    assert!(stdout.contains("\ndGf(aq): no value\n"));
+}
+
+#[test]
+fn counts_of_one_are_singular() {
+    let (summary, _) = run(&["network", "CCl", "--format", "summary", "--rules-only", "hydrogenolysis"], 0);
+    assert!(summary.starts_with("2 compounds, 1 step; complete\n"), "{summary}");
+    let (table, _) = run(&["network", "C"], 0);
+    assert!(table.contains("\n1 compound, 0 steps; complete\n"), "{table}");
+    let (summary, _) = run(&["network", "CC(Cl)Cl", "--format", "summary"], 0);
+    assert!(summary.contains("\n1 step without an estimate\n"), "{summary}");
+}
+
+#[test]
 fn rules_are_listed_shown_and_checked() {
     let (list, _) = run(&["rules"], 0);
     assert_eq!(list, run(&["rules", "list"], 0).0);
