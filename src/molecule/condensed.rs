@@ -1,10 +1,12 @@
 //! Condensed structural formulas of acyclic molecules: `cis-CHCl=CHCl`, `CH3CH(CH3)CH2Cl`.
 //!
 //! The longest carbon chain with most halogens is written from the end with fewer foreign
-//! groups and more hydrogens; of texts that are still alike the last by alphabet is taken, so the formula does
-//! not depend on the order of atoms. Halogens follow the alphabet. A carbene has a colon for
-//! its lone pair. Geometry stands in front: cis or trans where each end of the only stereo
-//! double bond holds one hydrogen, else E and Z in chain order.
+//! groups and more hydrogens; of texts that are still alike the last by alphabet is taken.
+//! Halogens follow the alphabet. A carbene has a colon for its lone pair. Geometry stands in
+//! front: cis or trans where each end of the only stereo double bond holds one hydrogen, else E
+//! and Z in chain order, Z before E where the chain reads alike from both ends.
+//!
+//! Invariant: the formula does not depend on the order of atoms, and holds every atom.
 
 use std::cmp::{Ordering, Reverse};
 use std::fmt::Write;
@@ -13,8 +15,12 @@ use super::element::Element;
 use super::graph::{BondOrder, Geometry, Ligand, Molecule};
 use super::priority::compare;
 
-/// The condensed formula; none for rings, for charges but those of a nitro group, and where E
-/// and Z cannot be told by atomic numbers alone.
+/// Most atoms, hydrogens not counted, of a formula that is still read.
+const MOST_ATOMS: usize = 80;
+
+/// The condensed formula; none for rings, for charges but those of a nitro group, for more than
+/// 80 atoms besides hydrogen, and where E and Z cannot be told by atomic numbers alone or would
+/// stand on side chains.
 ///
 /// # Example
 /// ```
@@ -27,25 +33,36 @@ use super::priority::compare;
 pub fn condensed(molecule: &Molecule) -> Option<String> {
     let is_carbon = |atom: usize| molecule.atom(atom).element == Element::C;
     let carbons: Vec<usize> = (0..molecule.n_atoms()).filter(|&a| is_carbon(a)).collect();
-    if molecule.n_bonds() >= molecule.n_atoms() || carbons.is_empty() {
+    let n_atoms = molecule.n_atoms();
+    if n_atoms > MOST_ATOMS || molecule.n_bonds() >= n_atoms || carbons.is_empty() {
         return None;
     }
     if let Some(name) = one_carbon_oxide(molecule) {
         return Some(name.to_owned());
     }
-    if !(0..molecule.n_atoms()).all(|atom| molecule.atom(atom).charge == 0 || is_in_nitro(molecule, atom)) {
+    if !(0..n_atoms).all(|atom| molecule.atom(atom).charge == 0 || is_in_nitro(molecule, atom)) {
         return None;
     }
     let chains = carbons.iter().flat_map(|&start| longest_chains(molecule, start, None));
-    let best = chains.max_by(|a, b| {
-        let key = |chain: &[usize]| {
-            let n_halogens: usize = chain.iter().map(|&atom| n_halogens(molecule, atom)).sum();
-            (chain.len(), n_halogens, Reverse(n_foreign(molecule, chain[0])), hydrogens(molecule, chain))
-        };
-        key(a).cmp(&key(b)).then_with(|| text(molecule, a, None).cmp(&text(molecule, b, None)))
-    })?;
-    let prefix = geometry(molecule, &best)?;
-    Some(prefix + &text(molecule, &best, None))
+    let rank = |chain: &[usize]| {
+        let n_halogens: usize = chain.iter().map(|&atom| n_halogens(molecule, atom)).sum();
+        let hydrogens: Vec<u8> = chain.iter().map(|&atom| molecule.atom(atom).n_hydrogens).collect();
+        (chain.len(), n_halogens, Reverse(n_foreign(molecule, chain[0])), hydrogens, text(molecule, chain, None))
+    };
+    let (_, best) = chains.fold((None, Vec::new()), |(best_rank, mut best), chain| {
+        let rank = Some(rank(&chain));
+        match rank.cmp(&best_rank) {
+            Ordering::Less => (best_rank, best),
+            Ordering::Equal => {
+                best.push(chain);
+                (best_rank, best)
+            }
+            Ordering::Greater => (rank, vec![chain]),
+        }
+    });
+    // Chains that read alike may differ in geometry: Z is written before E.
+    let prefix = best.iter().filter_map(|chain| geometry(molecule, chain)).max()?;
+    Some(prefix + &text(molecule, best.first()?, None))
 }
 
 fn one_carbon_oxide(molecule: &Molecule) -> Option<&'static str> {
@@ -80,10 +97,6 @@ fn n_foreign(molecule: &Molecule, atom: usize) -> usize {
 
 fn n_halogens(molecule: &Molecule, atom: usize) -> usize {
     molecule.neighbours(atom).filter(|&(n, _, _)| molecule.leaving_halogen(n).is_some()).count()
-}
-
-fn hydrogens(molecule: &Molecule, chain: &[usize]) -> Vec<u8> {
-    chain.iter().map(|&atom| molecule.atom(atom).n_hydrogens).collect()
 }
 
 /// The longest carbon chains that start at an atom and lead away from `from`.
@@ -137,9 +150,7 @@ fn atom_text(molecule: &Molecule, atom: usize, besides: [Option<usize>; 2], is_f
         .map(|(n, order, _)| (n, order))
         .collect();
     let is_last = besides[1].is_none();
-    if around.iter().any(|&(n, order)| is_oxo(molecule, n, order)) {
-        out.push('O');
-    }
+    push_counted(&mut out, "O", around.iter().filter(|&&(n, order)| is_oxo(molecule, n, order)).count());
     for element in [Element::Br, Element::Cl, Element::F, Element::I] {
         let n = around
             .iter()
@@ -206,7 +217,8 @@ fn push_counted(out: &mut String, what: &str, n: usize) {
     }
 }
 
-/// The prefix that tells the geometry; none if it can't be told.
+/// The prefix that tells the geometry; none if it can't be told, or if one of several stereo
+/// double bonds is off the chain, as a row of letters would not say which is which.
 fn geometry(molecule: &Molecule, chain: &[usize]) -> Option<String> {
     let place = |bond: usize| {
         let (a, b, _) = molecule.bond(bond);
@@ -224,6 +236,7 @@ fn geometry(molecule: &Molecule, chain: &[usize]) -> Option<String> {
             let cis = molecule.geometry_between(*only, at_a, at_b)? == Geometry::Cis;
             Some(if cis { "cis-" } else { "trans-" }.to_owned())
         }
+        several if several.len() > 1 && several.iter().any(|&bond| place(bond).1 == usize::MAX) => None,
         several => {
             let letters: Option<Vec<&str>> = several.iter().map(|&bond| e_or_z(molecule, bond)).collect();
             Some(format!("({})-", letters?.join(",")))

@@ -76,8 +76,10 @@ fn grow(adjacency: &Adjacency, path: &mut Vec<usize>, rings: &mut Vec<[usize; 6]
 /// J. D. Horton, SIAM J. Comput. 16, 358 (1987): the shortest rings through each atom and bond,
 /// kept while they are independent.
 pub fn smallest_ring_sizes(adjacency: &Adjacency) -> Vec<usize> {
-    let bonds: Vec<(usize, usize)> =
+    let mut bonds: Vec<(usize, usize)> =
         (0..adjacency.len()).flat_map(|a| adjacency[a].iter().map(move |&b| (a, b))).filter(|(a, b)| a < b).collect();
+    // Neighbours come in no fixed order, and bonds are looked up by halving.
+    bonds.sort_unstable();
     let mut rings: Vec<Vec<usize>> = Vec::new();
     for root in 0..adjacency.len() {
         let parents = breadth_first_tree(adjacency, root);
@@ -222,6 +224,24 @@ mod tests {
         assert!(is_strained_bridgehead(&norbornane, 0, 6, 8));
         assert!(!is_strained_bridgehead(&norbornane, 1, 2, 8));
         assert_eq!(smallest_ring_sizes(&norbornane), [5, 5]);
+    }
+
+    #[test]
+    fn ring_sizes_do_not_depend_on_the_order_of_neighbours() {
+        for n in 3..10 {
+            let mut ring: Vec<(usize, usize)> = (0..n).map(|a| (a, (a + 1) % n)).collect();
+            ring.push((0, n));
+            let mut adjacency = graph(n + 1, &ring);
+            assert_eq!(smallest_ring_sizes(&adjacency), [n]);
+            for around in &mut adjacency {
+                around.sort_unstable();
+            }
+            assert_eq!(smallest_ring_sizes(&adjacency), [n]);
+            for around in &mut adjacency {
+                around.reverse();
+            }
+            assert_eq!(smallest_ring_sizes(&adjacency), [n]);
+        }
     }
 
     #[test]

@@ -179,6 +179,12 @@ impl Network {
         self.homes[compound as usize].frame as usize
     }
 
+    /// Whether a compound is a carbene.
+    pub fn is_transient(&self, compound: CompoundId) -> bool {
+        let (prepared, row) = self.state(compound);
+        prepared.layout.is_transient(row)
+    }
+
     /// A compound's decoration of its frame.
     pub fn decoration(&self, compound: CompoundId) -> Decoration {
         let (prepared, row) = self.state(compound);

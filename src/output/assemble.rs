@@ -7,7 +7,8 @@
 use std::borrow::Cow;
 
 use super::Records;
-use super::record::{ByHalogen, Caution, Compound, GibbsOrigin, Header, Step};
+use super::counts::{Counts, Generation};
+use super::record::{ByHalogen, Caution, Compound, GibbsOrigin, Header, Step, mark_elements};
 use crate::molecule::Molecule;
 use crate::molecule::condensed::condensed;
 use crate::network::half_reaction::between;
@@ -61,6 +62,9 @@ pub trait Energies {
     /// The energy of a compound.
     fn compound(&self, compound: CompoundId) -> CompoundEnergy;
 
+    /// Whether a step of `n_reactants` molecules has an energy; cheaper than asking for it.
+    fn has_value(&self, step: &network::Step, n_reactants: u32) -> bool;
+
     /// The energy of a step.
     fn step(&self, step: &network::Step, reaction: &HalfReaction) -> StepEnergy;
 }
@@ -101,9 +105,44 @@ impl Records for Assembled<'_> {
             self.network.steps_from(from).map(move |step| Cow::Owned(self.step(&step, &molecule)))
         }))
     }
+
+    fn counts(&self) -> Counts {
+        let mut counts = Counts {
+            generations: self.count_generations(),
+            n_steps_by_rule: vec![0; self.rules.len()],
+            ..Counts::default()
+        };
+        // No rule brings in a halogen: the parents hold every one there is.
+        for parent in self.network.parents() {
+            mark_elements(&mut counts.elements, &self.compound(parent));
+        }
+        for step in self.network.steps() {
+            counts.n_steps_by_rule[step.rule] += 1;
+            let n_reactants = u32::from(self.rules[step.rule].copies);
+            counts.n_without_value += usize::from(!self.energies.has_value(&step, n_reactants));
+        }
+        counts
+    }
 }
 
 impl Assembled<'_> {
+    fn count_generations(&self) -> Vec<Generation> {
+        let tally = |generation| {
+            let compounds = self.network.generation(generation);
+            let count = |holds: &dyn Fn(CompoundId) -> bool| compounds.clone().filter(|&id| holds(id)).count();
+            Generation {
+                compounds: compounds.len(),
+                transients: count(&|id| self.network.is_transient(id)),
+                end_products: count(&|id| self.is_end_product(id)),
+            }
+        };
+        (0..self.network.n_generations()).map(tally).collect()
+    }
+
+    fn is_end_product(&self, id: CompoundId) -> bool {
+        self.network.is_expanded(id) && self.network.steps_from(id).len() == 0
+    }
+
     fn compound(&self, id: CompoundId) -> Compound {
         let molecule = self.network.molecule(id);
         let smiles = smiles::write(&molecule);
@@ -120,8 +159,8 @@ impl Assembled<'_> {
             cas,
             generation: self.network.generation_of(id) as u32,
             is_parent: self.network.parents().contains(&id),
-            is_end_product: self.network.is_expanded(id) && self.network.steps_from(id).len() == 0,
-            transient: (0..molecule.n_atoms()).any(|atom| molecule.is_carbene(atom)),
+            is_end_product: self.is_end_product(id),
+            transient: self.network.is_transient(id),
             halogens: halogens(&molecule),
             molar_mass_g_per_mol: formula.molar_mass_g_per_mol(),
             monoisotopic_mass_u: formula.monoisotopic_mass_u(),

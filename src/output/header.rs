@@ -17,7 +17,13 @@ pub enum Extent {
 
 /// The header of a network made by these rules, at these conditions.
 pub fn header(network: &Network, rules: &[Rule], conditions: &thermo::Conditions, extent: Extent) -> Header {
-    let warnings = [isomer_warning(network), cumulene_warning(network), limit_warning(network, extent)];
+    let warnings = [
+        isomer_warning(network),
+        idle_warning(network, rules),
+        cumulene_warning(network),
+        cage_warning(network),
+        limit_warning(network, extent),
+    ];
     Header {
         format: FORMAT.to_owned(),
         program: Program::this(),
@@ -53,11 +59,27 @@ fn isomer_warning(network: &Network) -> Option<String> {
     (n > 1).then(|| format!("the compound was given without its configuration: all {n} isomers are parents"))
 }
 
+/// Says that no rule acts on what was given, which is no finding about the compound.
+fn idle_warning(network: &Network, rules: &[Rule]) -> Option<String> {
+    let is_idle = network.n_steps() == 0 && network.outcome() == Outcome::Complete && !rules.is_empty();
+    is_idle.then(|| "none of the rules chosen acts on this compound; --with adds rules that are off".to_owned())
+}
+
 /// Says that cumulenes hide isomers.
 fn cumulene_warning(network: &Network) -> Option<String> {
     let n = network.n_with_hidden_cumulene_isomers();
     let what = if n == 1 { "1 compound holds a cumulene".to_owned() } else { format!("{n} compounds hold a cumulene") };
     (n > 0).then(|| format!("{what} whose configuration is not told apart: each stands for two isomers or more"))
+}
+
+/// Says that isomers are listed that a small cage cannot have.
+fn cage_warning(network: &Network) -> Option<String> {
+    let is_full = network.identity() == molecule::Identity::Full;
+    let has_cage = network.frames().iter().any(|frame| frame.prepared.has_small_cage());
+    (is_full && has_cage).then(|| {
+        "the skeleton has small bridged rings: configurations at bridgeheads that strain forbids are not left out"
+            .to_owned()
+    })
 }
 
 /// Says that a limit was reached, if it was one of the user's or the program's and not part of

@@ -69,3 +69,8 @@ impl Notes {
         Ok(())
     }
 }
+
+/// A number with what is counted, in the singular or the plural.
+pub(super) fn counted(n: usize, what: &str) -> String {
+    if n == 1 { format!("1 {what}") } else { format!("{n} {what}s") }
+}

@@ -12,6 +12,7 @@
 //! Nothing here prints, and nothing here calculates chemistry.
 
 pub mod assemble;
+pub mod counts;
 pub mod csv;
 pub mod decimals;
 pub mod dot;
@@ -33,6 +34,7 @@ pub mod valued;
 use std::borrow::Cow;
 use std::io;
 
+use counts::Counts;
 use record::{Compound, Header, Network, Step};
 
 /// A network as records, made one by one.
@@ -47,6 +49,11 @@ pub trait Records {
 
     /// The steps, in order of id.
     fn steps(&self) -> Box<dyn Iterator<Item = Cow<'_, Step>> + '_>;
+
+    /// Numbers of the network; made without records where that is faster.
+    fn counts(&self) -> Counts {
+        Counts::of(self.header(), self.compounds(), self.steps())
+    }
 }
 
 impl Records for Network {

@@ -3,8 +3,8 @@
 use std::io;
 use std::time::Duration;
 
-use super::layout::{table, write_wrapped};
-use super::record::{ByHalogen, mark_elements};
+use super::counts::Generation;
+use super::layout::{counted, table, write_wrapped};
 use super::{Records, Writer};
 
 /// Writes the counts of a network.
@@ -16,30 +16,15 @@ pub struct Summary {
     pub energies: Option<Duration>,
 }
 
-/// Numbers of one generation.
-#[derive(Default, Clone)]
-struct Generation {
-    compounds: usize,
-    transients: usize,
-    end_products: usize,
-}
-
-#[derive(Default)]
-struct Counts {
-    generations: Vec<Generation>,
-    elements: ByHalogen<bool>,
-    n_steps_by_rule: Vec<usize>,
-    n_without_value: usize,
-}
-
 impl Writer for Summary {
     fn write(&self, network: &dyn Records, out: &mut dyn io::Write) -> io::Result<()> {
-        let counts = Counts::of(network);
+        let counts = network.counts();
         let header = network.header();
         let n_compounds: usize = counts.generations.iter().map(|g| g.compounds).sum();
         let n_steps: usize = counts.n_steps_by_rule.iter().sum();
         let extent = if header.complete { "complete" } else { "INCOMPLETE: a limit was reached" };
-        writeln!(out, "{n_compounds} compounds, {n_steps} steps; {extent}")?;
+        let (compounds, steps) = (counted(n_compounds, "compound"), counted(n_steps, "step"));
+        writeln!(out, "{compounds}, {steps}; {extent}")?;
         writeln!(out, "At {}", header.conditions.text(counts.elements))?;
         for warning in &header.warnings {
             write_wrapped(&format!("Warning: {warning}"), 2, out)?;
@@ -50,7 +35,7 @@ impl Writer for Summary {
         let rows = by_rule.map(|(rule, n)| vec![rule.clone(), n.to_string()]).collect();
         writeln!(out, "\n{}", table(&["rule", "steps"], &[1], rows))?;
         if counts.n_without_value > 0 {
-            writeln!(out, "\n{} steps have no estimate", counts.n_without_value)?;
+            writeln!(out, "\n{} without an estimate", counted(counts.n_without_value, "step"))?;
         }
         self.write_times(out)
     }
@@ -70,31 +55,6 @@ fn time_text(time: Duration) -> String {
         s if s < 1e-3 => format!("{:.0} µs", s * 1e6),
         s if s < 1.0 => format!("{:.1} ms", s * 1e3),
         s => format!("{s:.2} s"),
-    }
-}
-
-impl Counts {
-    fn of(network: &dyn Records) -> Counts {
-        let mut counts = Counts { n_steps_by_rule: vec![0; network.header().rules.len()], ..Counts::default() };
-        for compound in network.compounds() {
-            mark_elements(&mut counts.elements, &compound);
-            let generation = compound.generation as usize;
-            if counts.generations.len() <= generation {
-                counts.generations.resize(generation + 1, Generation::default());
-            }
-            let tally = &mut counts.generations[generation];
-            tally.compounds += 1;
-            tally.transients += usize::from(compound.transient);
-            tally.end_products += usize::from(compound.is_end_product);
-        }
-        for step in network.steps() {
-            let rule = network.header().rules.iter().position(|name| *name == step.rule);
-            if let Some(rule) = rule {
-                counts.n_steps_by_rule[rule] += 1;
-            }
-            counts.n_without_value += usize::from(step.e_volt.is_none() && step.gibbs_step_kj_per_mol.is_none());
-        }
-        counts
     }
 }
 

@@ -6,7 +6,7 @@
 use std::io;
 
 use super::decimals::{degeneracy_text, kj_sd_text, kj_text, volt_sd_text, volt_text};
-use super::layout::{Notes, table, write_wrapped};
+use super::layout::{Notes, counted, table, write_wrapped};
 use super::record::{Compound, GibbsOrigin, Network, Step};
 use super::{Records, Writer};
 
@@ -61,7 +61,8 @@ pub(super) fn write_heading(network: &Network, out: &mut dyn io::Write) -> io::R
     write_wrapped(&format!("Rules: {}", header.rules.join(", ")), 2, out)?;
     let (n_compounds, n_steps) = (network.compounds.len(), network.steps.len());
     let extent = if header.complete { "complete" } else { "INCOMPLETE: a limit was reached" };
-    writeln!(out, "{n_compounds} compounds, {n_steps} steps; {extent}")?;
+    let (compounds, steps) = (counted(n_compounds, "compound"), counted(n_steps, "step"));
+    writeln!(out, "{compounds}, {steps}; {extent}")?;
     header.warnings.iter().try_for_each(|warning| write_wrapped(&format!("Warning: {warning}"), 2, out))
 }
 

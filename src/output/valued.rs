@@ -39,6 +39,10 @@ impl Energies for Valued<'_> {
         }
     }
 
+    fn has_value(&self, step: &Step, n_reactants: u32) -> bool {
+        self.energies.has_value(step.from, step.to, n_reactants)
+    }
+
     fn step(&self, step: &Step, reaction: &HalfReaction) -> StepEnergy {
         let ends = (step.from, step.to);
         match potential(self.network, self.energies, self.scheme, &self.conditions, ends, reaction) {
@@ -71,16 +75,14 @@ impl Valued<'_> {
         if gibbs.is_none() {
             remarks.push(self.why_missing(compound));
         }
-        let parts = match node.known.as_ref().and_then(|known| known.aqueous.clone()) {
-            Some((value, source)) => vec![Part {
-                quantity: "Gibbs energy of formation in water, as measured".to_owned(),
-                unit: "kJ/mol".to_owned(),
-                value: Some((value.mean, value.sd)),
-                source,
-                contributions: Vec::new(),
-            }],
-            None => self.parts(&node),
-        };
+        let measured = node.known.as_ref().and_then(|known| known.aqueous.clone());
+        let parts = measured.map_or_else(
+            || {
+                let missing = gibbs.is_none().then(|| parts::in_words(&self.network.state(compound).0.frame));
+                self.parts(&node, missing.as_deref())
+            },
+            |(value, source)| vec![measured_whole((value.mean, value.sd), source)],
+        );
         Explanation {
             title,
             smiles: smiles::write(&self.network.molecule(compound)),
@@ -91,8 +93,8 @@ impl Valued<'_> {
         }
     }
 
-    fn parts(&self, node: &Node) -> Vec<Part> {
-        let mut parts: Vec<Part> = Quantity::ALL.iter().map(|&quantity| self.part(node, quantity)).collect();
+    fn parts(&self, node: &Node, missing: Option<&str>) -> Vec<Part> {
+        let mut parts: Vec<Part> = Quantity::ALL.iter().map(|&quantity| self.part(node, quantity, missing)).collect();
         let plain = |quantity: &str, value: f64, source: &str| Part {
             quantity: quantity.to_owned(),
             unit: "J/mol/K".to_owned(),
@@ -108,7 +110,8 @@ impl Valued<'_> {
         parts
     }
 
-    fn part(&self, node: &Node, quantity: Quantity) -> Part {
+    /// One part. `missing` names the elements whose groups have no value, if that is so.
+    fn part(&self, node: &Node, quantity: Quantity, missing: Option<&str>) -> Part {
         let name = match quantity {
             Quantity::Enthalpy => "enthalpy of formation, ideal gas",
             Quantity::Entropy => "standard entropy, ideal gas",
@@ -117,14 +120,19 @@ impl Valued<'_> {
         let index = quantity as usize;
         let (value, source, contributions) = if let Some(value) = node.measured(quantity) {
             let sources = node.known.as_ref().map(|k| k.sources[index].clone()).unwrap_or_default();
-            ((value.mean, value.sd), format!("measured: {sources}"), Vec::new())
+            (Some((value.mean, value.sd)), format!("measured: {sources}"), Vec::new())
+        } else if let Some(words) = missing {
+            let source = format!(
+                "groups with {words} have none; those below enter the steps that leave them alone, by difference"
+            );
+            (None, source, self.contributions(node, quantity))
         } else {
             let own = node.model_sd[index];
             let sd = (self.scheme.variance(quantity, &node.groups) + own * own).sqrt();
             let source = format!("sum of groups; deviation from the scheme itself ± {own:.2}");
-            ((node.estimates[index], sd), source, self.contributions(node, quantity))
+            (Some((node.estimates[index], sd)), source, self.contributions(node, quantity))
         };
-        Part { quantity: name.to_owned(), unit: quantity.unit().to_owned(), value: Some(value), source, contributions }
+        Part { quantity: name.to_owned(), unit: quantity.unit().to_owned(), value, source, contributions }
     }
 
     fn contributions(&self, node: &Node, quantity: Quantity) -> Vec<Contribution> {
@@ -139,6 +147,17 @@ impl Valued<'_> {
                 source: "data/fitted/groups.csv".to_owned(),
             })
             .collect()
+    }
+}
+
+/// The only part of a value that was measured as a whole.
+fn measured_whole(value: (f64, f64), source: String) -> Part {
+    Part {
+        quantity: "Gibbs energy of formation in water, as measured".to_owned(),
+        unit: "kJ/mol".to_owned(),
+        value: Some(value),
+        source,
+        contributions: Vec::new(),
     }
 }
 

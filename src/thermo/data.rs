@@ -52,6 +52,8 @@ pub struct Row {
     pub source: String,
     /// Why it is not used; empty if it is.
     pub set_aside: String,
+    /// Why it steadies the fit without standing for a measurement; empty if it is one.
+    pub fit_only: String,
 }
 
 /// An ion or small molecule of a half-reaction.

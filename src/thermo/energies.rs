@@ -11,6 +11,7 @@ use rustc_hash::FxHashMap;
 use super::constants::{RT_LN_10_KJ_PER_MOL, STANDARD_TEMPERATURE_KELVIN};
 use super::data::{Quantity, Value, combine};
 use super::estimate::{Estimator, element_entropy, symmetry_entropy};
+use super::features::FrameFacts;
 use super::parts::signature;
 use super::scheme::{Measured, Scheme};
 use crate::frame::{Decoration, Prepared};
@@ -29,6 +30,8 @@ pub struct Energies {
     gibbs_kj_per_mol: Vec<f64>,
     /// Signature of the parts without value, by compound; empty if there are none at all.
     signatures: Vec<u64>,
+    /// What the groups need to know of each frame.
+    facts: Vec<FrameFacts>,
     /// What was measured, by compound.
     measured: FxHashMap<CompoundId, Known>,
 }
@@ -53,11 +56,12 @@ pub(super) const FACTORS: [f64; 3] = [1.0, -STANDARD_TEMPERATURE_KELVIN / 1000.0
 /// About a microsecond a compound; see `benches/enumerate.rs`. Nine bytes a compound.
 pub fn energies(network: &Network, scheme: &Scheme, n_threads: usize) -> Energies {
     let measured = find_measured(network, scheme);
+    let facts: Vec<FrameFacts> = network.frames().iter().map(|f| FrameFacts::of(&f.prepared.frame)).collect();
     let group_energies = group_energies(scheme);
     let starts: Vec<usize> = (0..network.n_compounds()).step_by(BLOCK).collect();
     let block = |&start: &usize| {
         let end = network.n_compounds().min(start + BLOCK);
-        estimate_block(network, &group_energies, start as CompoundId..end as CompoundId)
+        estimate_block(network, &facts, &group_energies, start as CompoundId..end as CompoundId)
     };
     let blocks: Vec<Vec<(f64, u64)>> = if n_threads > 1 && starts.len() > 1 {
         starts.par_iter().map(block).collect()
@@ -67,6 +71,7 @@ pub fn energies(network: &Network, scheme: &Scheme, n_threads: usize) -> Energie
     let mut found = Energies {
         gibbs_kj_per_mol: blocks.iter().flatten().map(|&(gibbs, _)| gibbs).collect(),
         signatures: Vec::new(),
+        facts,
         measured,
     };
     if blocks.iter().flatten().any(|&(_, signature)| signature != 0) {
@@ -81,7 +86,12 @@ fn group_energies(scheme: &Scheme) -> Vec<f64> {
     (0..super::features::N_FEATURES).map(|g| (0..3).map(|q| FACTORS[q] * scheme.values[q][g]).sum()).collect()
 }
 
-fn estimate_block(network: &Network, group_energies: &[f64], range: std::ops::Range<CompoundId>) -> Vec<(f64, u64)> {
+fn estimate_block(
+    network: &Network,
+    facts: &[FrameFacts],
+    group_energies: &[f64],
+    range: std::ops::Range<CompoundId>,
+) -> Vec<(f64, u64)> {
     let has_geometry = network.identity() >= Identity::Geometric;
     let mut current: Option<(usize, Estimator<'_>, Decoration)> = None;
     let mut candidates = Vec::new();
@@ -93,7 +103,7 @@ fn estimate_block(network: &Network, group_energies: &[f64], range: std::ops::Ra
                 Some(kept) if kept.0 == number => kept,
                 stale => stale.insert((
                     number,
-                    Estimator::new(&prepared.frame, has_geometry),
+                    Estimator::new(&prepared.frame, &facts[number], has_geometry),
                     Decoration::bare(&prepared.frame),
                 )),
             };
@@ -191,6 +201,18 @@ impl Energies {
     /// Gibbs energy on the scale of the compound's signature, kJ/mol.
     pub(super) fn relative_kj_per_mol(&self, compound: CompoundId) -> f64 {
         self.gibbs_kj_per_mol[compound as usize]
+    }
+
+    /// What the groups need to know of a frame, by its number in the network.
+    pub(super) fn facts(&self, frame: usize) -> &FrameFacts {
+        &self.facts[frame]
+    }
+
+    /// Whether a step between two compounds has a value: neither has parts without value, or
+    /// both have the same and one becomes one.
+    pub fn has_value(&self, from: CompoundId, to: CompoundId, n_reactants: u32) -> bool {
+        let (of_from, of_to) = (self.signature(from), self.signature(to));
+        of_from == of_to && (of_from == 0 || n_reactants == 1)
     }
 
     /// Signature of the parts without value.

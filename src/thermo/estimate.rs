@@ -11,22 +11,22 @@ use crate::molecule::{Element, Halogen};
 #[derive(Debug, Clone)]
 pub struct Estimator<'a> {
     frame: &'a Frame,
-    facts: FrameFacts,
+    facts: &'a FrameFacts,
     has_geometry: bool,
     views: Vec<SiteView>,
 }
 
 impl<'a> Estimator<'a> {
-    /// For a frame; without geometry in the states (`has_geometry` false) cis and trans count
+    /// For a frame and its facts; without geometry in the states (`has_geometry` false) cis and trans count
     /// half each.
-    pub fn new(frame: &'a Frame, has_geometry: bool) -> Estimator<'a> {
-        Estimator { frame, facts: FrameFacts::of(frame), has_geometry, views: Vec::new() }
+    pub fn new(frame: &'a Frame, facts: &'a FrameFacts, has_geometry: bool) -> Estimator<'a> {
+        Estimator { frame, facts, has_geometry, views: Vec::new() }
     }
 
     /// Gives `emit` each group with its count; a group may come several times.
     pub fn count(&mut self, state: &Decoration, emit: &mut impl FnMut(usize, f64)) {
-        features::view(self.frame, &self.facts, state, &mut self.views);
-        features::count(self.frame, &self.facts, state, &self.views, self.has_geometry, emit);
+        features::view(self.frame, self.facts, state, &mut self.views);
+        features::count(self.frame, self.facts, state, &self.views, self.has_geometry, emit);
     }
 
     /// The groups of a decoration, each once, by number.

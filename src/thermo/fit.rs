@@ -4,7 +4,7 @@
 //! Group values have Gaussian priors of mean zero whose widths are set for each family in
 //! `data/priors.csv`; rows are weighted by 1/(sd² + model error²), less if they stand far off
 //! (Student's t with four degrees of freedom). The model error, one for each [`Class`], is set so
-//! that deviations of left-out rows are as large as foretold.
+//! that deviations of left-out measurements are as large as foretold.
 //!
 //! # Source
 //! Ridge as a posterior mean: A. E. Hoerl, R. W. Kennard, Technometrics 12, 55 (1970).
@@ -50,6 +50,8 @@ pub struct Observation {
     pub value: Value,
     /// Its class.
     pub class: Class,
+    /// Whether the value is a measurement, and not one that only steadies the fit.
+    pub is_measured: bool,
 }
 
 /// What a fit gives.
@@ -99,7 +101,7 @@ fn median_sd(observations: &[Observation]) -> f64 {
 /// z cut at 3 so that single wrong rows do not widen everything.
 fn ratio(observations: &[Observation], fit: &Fit, class: Class) -> f64 {
     let z: Vec<f64> = (0..observations.len())
-        .filter(|&i| observations[i].class == class)
+        .filter(|&i| observations[i].class == class && observations[i].is_measured)
         .map(|i| (fit.left_out[i] / fit.left_out_sd[i]).abs().min(3.0))
         .collect();
     if z.len() < 5 {
@@ -156,6 +158,7 @@ mod tests {
             groups: vec![(0, 1.0), (1, x)],
             value: Value { mean: 3.0 + 2.0 * x, sd: 0.1 },
             class: Class::NoHalogen,
+            is_measured: true,
         };
         let all: Vec<Observation> = (0..20).map(|i| point(f64::from(i))).collect();
         let found = fit(&all, &[100.0, 100.0]).unwrap();

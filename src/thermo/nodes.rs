@@ -56,7 +56,8 @@ impl Node {
         let (prepared, row) = network.state(compound);
         let state = network.decoration(compound);
         let frame = &prepared.frame;
-        let groups = Estimator::new(frame, network.identity() >= Identity::Geometric).groups(&state);
+        let facts = energies.facts(network.frame_of(compound));
+        let groups = Estimator::new(frame, facts, network.identity() >= Identity::Geometric).groups(&state);
         let mut candidates = vec![0; row.len()];
         prepared.layout.candidates(frame, &state, &mut candidates);
         let symmetry = symmetry_entropy(frame, &state, &prepared.canonicaliser.stabiliser(row, &candidates));

@@ -94,10 +94,8 @@ pub fn potential(
     reaction: &HalfReaction,
 ) -> Result<Potential, Missing> {
     let n_reactants = f64::from(reaction.n_reactants);
-    let (of_from, of_to) = (energies.signature(from), energies.signature(to));
-    let cancels = of_from == of_to && (of_from == 0 || reaction.n_reactants == 1);
-    if !cancels {
-        let without = if of_to == 0 { from } else { to };
+    if !energies.has_value(from, to, reaction.n_reactants) {
+        let without = if energies.signature(to) == 0 { from } else { to };
         return Err(Missing { parts: in_words(&network.state(without).0.frame) });
     }
     let difference = energies.relative_kj_per_mol(to) - n_reactants * energies.relative_kj_per_mol(from);
@@ -117,7 +115,7 @@ pub fn potential(
         gibbs_kj_per_mol: at_conditions,
         gibbs_sd_kj_per_mol: sd,
         volts,
-        origin: origin(&node_from, &node_to, of_from),
+        origin: origin(&node_from, &node_to, energies.signature(from)),
     })
 }
 

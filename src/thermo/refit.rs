@@ -5,7 +5,7 @@ use std::fmt::Write;
 
 use super::data::{Quantity, Row, Value, combine, group, rows};
 use super::estimate::{Estimator, symmetry_entropy};
-use super::features;
+use super::features::{self, FrameFacts};
 use super::fit::{Class, Fit, Observation, fit};
 use crate::frame::{Canonicaliser, Decoration, Frame, Layout};
 use crate::molecule::{Element, Halogen, Identity, Molecule};
@@ -74,11 +74,12 @@ pub fn refit(sources: Sources<'_>) -> Result<Refitted, RefitError> {
         let groups = group(&of_quantity, |row| canonical(&row.smiles));
         let mut observations = Vec::new();
         for (key, rows) in groups {
-            let values: Vec<Value> = rows.iter().map(|row| Value { mean: row.value, sd: row.sd }).collect();
-            let (Some(value), Some(compound)) = (combine(&values), compounds.get(&key)) else { continue };
-            let sources: Vec<&str> = rows.iter().map(|row| short_source(&row.source)).collect();
-            measured.entry(key.clone()).or_default()[quantity as usize] = Some((value, distinct(&sources)));
-            observations.extend(compound.observation(&key, quantity, value));
+            let (Some(value), Some(compound)) = (combined(&rows), compounds.get(&key)) else { continue };
+            let standing: Vec<&Row> = rows.into_iter().filter(|row| row.fit_only.is_empty()).collect();
+            observations.extend(compound.observation(&key, quantity, value, !standing.is_empty()));
+            let Some(value) = combined(&standing) else { continue };
+            let sources: Vec<&str> = standing.iter().map(|row| short_source(&row.source)).collect();
+            measured.entry(key).or_default()[quantity as usize] = Some((value, distinct(&sources)));
         }
         let priors = prior_widths(sources.priors, quantity)?;
         let fitted = fit(&observations, &priors).map_err(|why| RefitError::Fit { quantity, why })?;
@@ -95,6 +96,12 @@ pub fn refit(sources: Sources<'_>) -> Result<Refitted, RefitError> {
         files.push((name, covariance_table(fitted)));
     }
     Ok(Refitted { files, report })
+}
+
+/// One value of a compound's rows.
+fn combined(rows: &[&Row]) -> Option<Value> {
+    let values: Vec<Value> = rows.iter().map(|row| Value { mean: row.value, sd: row.sd }).collect();
+    combine(&values)
 }
 
 /// Canonical text of a row's structure, if it is a compound.
@@ -118,13 +125,13 @@ impl Compound {
         let frame = Frame::of(&molecule);
         let state = frame.decompose(&molecule);
         let is_told = molecule.isomers(Identity::Geometric, 64).is_ok_and(|isomers| isomers.len() == 1);
-        let groups = Estimator::new(&frame, is_told).groups(&state);
+        let groups = Estimator::new(&frame, &FrameFacts::of(&frame), is_told).groups(&state);
         Compound { molecule, frame, state, groups }
     }
 
     /// What the fit sees: entropies with the symmetry put back. None for structures with fixed
     /// atoms, whose groups the scheme does not know.
-    fn observation(&self, key: &str, quantity: Quantity, value: Value) -> Option<Observation> {
+    fn observation(&self, key: &str, quantity: Quantity, value: Value, is_measured: bool) -> Option<Observation> {
         if self.frame.sites().len() != self.frame.skeleton().n_atoms() {
             return None;
         }
@@ -142,6 +149,7 @@ impl Compound {
             groups: self.groups.clone(),
             value,
             class: Class::of(self.molecule.halogens()),
+            is_measured,
         })
     }
 }
@@ -159,12 +167,12 @@ fn prior_widths(text: &str, quantity: Quantity) -> Result<Vec<f64>, RefitError> 
     features::families().into_iter().map(of).collect()
 }
 
-/// Deviations of left-out rows by class of compound.
+/// Deviations of left-out measurements by class of compound.
 fn describe(report: &mut String, quantity: Quantity, observations: &[Observation], fit: &Fit) {
     const CLASSES: [&str; 5] = ["no halogen", "chlorine only", "bromine only", "fluorine only", "mixed or iodine"];
     for (class, name) in CLASSES.iter().enumerate() {
-        let members: Vec<usize> =
-            (0..observations.len()).filter(|&i| class_of(&observations[i].smiles) == class).collect();
+        let is_member = |i: &usize| observations[*i].is_measured && class_of(&observations[*i].smiles) == class;
+        let members: Vec<usize> = (0..observations.len()).filter(is_member).collect();
         if members.is_empty() {
             continue;
         }

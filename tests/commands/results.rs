@@ -128,6 +128,12 @@ fn hidden_isomers_of_cumulenes_are_told() {
     assert!(stderr.contains("cumulene whose configuration is not told apart"), "{stderr}");
 }
 
+#[test]
+fn impossible_isomers_of_small_cages_are_told() {
+    let (_, stderr) = run(&["network", "ClC1CC2CCC1C2", "--identity", "full", "--format", "summary"], 0);
+    assert!(stderr.contains("configurations at bridgeheads that strain forbids"), "{stderr}");
+}
+
 /// The reader goes away after one byte; the program ends quietly.
 #[test]
 fn a_closed_pipe_ends_quietly() {
@@ -144,6 +150,26 @@ fn a_closed_pipe_ends_quietly() {
     let output = child.wait_with_output().unwrap();
     assert_eq!(output.status.code(), Some(0));
     assert_eq!(String::from_utf8(output.stderr).unwrap(), "");
+}
+
+#[test]
+fn no_part_of_a_missing_energy_is_given_as_a_value() {
+    let (stdout, _) = run(&["explain", "COP(=O)(OC)OC=C(Cl)Cl"], 0);
+    for quantity in ["enthalpy of formation, ideal gas", "standard entropy, ideal gas", "log10 of the Henry solubility"]
+    {
+        assert!(stdout.contains(&format!("\n{quantity}: no value (groups with oxygen, phosphorus")), "{stdout}");
+    }
+    assert!(stdout.contains("\ndGf(aq): no value\n"));
+}
+
+#[test]
+fn counts_of_one_are_singular() {
+    let (summary, _) = run(&["network", "CCl", "--format", "summary", "--rules-only", "hydrogenolysis"], 0);
+    assert!(summary.starts_with("2 compounds, 1 step; complete\n"), "{summary}");
+    let (table, _) = run(&["network", "C"], 0);
+    assert!(table.contains("\n1 compound, 0 steps; complete\n"), "{table}");
+    let (summary, _) = run(&["network", "CC(Cl)Cl", "--format", "summary"], 0);
+    assert!(summary.contains("\n1 step without an estimate\n"), "{summary}");
 }
 
 #[test]

@@ -139,8 +139,13 @@ impl Figure {
         };
         let generation = |id: u32| self.network.compound(id).map_or(0, |c| c.generation);
         let is_onward = generation(step.to) > generation(step.from);
-        // Graphviz routes arrows within a rank badly when their text takes up room there.
-        let (label, constraint) = if is_onward { ("label", "") } else { ("xlabel", ", constraint=false") };
+        // Downward, Graphviz sets the two ends of an arrow within a generation side by side and its
+        // text between them. Rightward, such texts would only widen the figure: there they float.
+        let (label, constraint) = if is_onward || self.page.direction == Direction::Down {
+            ("label", "")
+        } else {
+            ("xlabel", ", constraint=false")
+        };
         let text = quoted(&format!(" {mark} {energy}"));
         writeln!(out, "  c{} -> c{} [{label}={text}, style={line}, arrowhead={arrow}{constraint}];", step.from, step.to)
     }
