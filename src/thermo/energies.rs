@@ -5,6 +5,8 @@
 //! meaningful only against compounds with the same signature: see [`parts`](super::parts).
 //! Uncertainties are made when asked for, by [`nodes`](super::nodes).
 
+use std::collections::BTreeSet;
+
 use rayon::prelude::*;
 use rustc_hash::FxHashMap;
 
@@ -15,7 +17,7 @@ use super::features::FrameFacts;
 use super::parts::signature;
 use super::scheme::{Measured, Scheme};
 use crate::frame::{Decoration, Prepared};
-use crate::molecule::{Element, Identity, Molecule};
+use crate::molecule::{Identity, Molecule};
 use crate::network::{CompoundId, Network};
 use crate::smiles;
 
@@ -129,16 +131,10 @@ fn unshared_energy(prepared: &Prepared, state: &Decoration, row: &[u64], candida
 fn find_measured(network: &Network, scheme: &Scheme) -> FxHashMap<CompoundId, Known> {
     let mut rows: FxHashMap<CompoundId, Vec<&Measured>> = FxHashMap::default();
     let mut found: FxHashMap<CompoundId, Known> = FxHashMap::default();
-    for frame in network.frames() {
-        let n_carbons = frame.prepared.frame.skeleton().atoms().filter(|a| a.element == Element::C).count();
-        let is_bare = frame.prepared.frame.sites().len() == frame.prepared.frame.skeleton().n_atoms();
-        for row in scheme.measured.iter().filter(|row| is_bare && row.n_carbons == n_carbons) {
-            if let Some(compound) = smiles::read(&row.smiles).ok().and_then(|m| find_one(network, &m)) {
-                let known = rows.entry(compound).or_default();
-                if !known.iter().any(|k| k.smiles == row.smiles) {
-                    known.push(row);
-                }
-            }
+    let sizes = carbons_of_bare_frames(network);
+    for row in scheme.measured.iter().filter(|row| sizes.contains(&row.n_carbons)) {
+        if let Some(compound) = smiles::read(&row.smiles).ok().and_then(|m| find_one(network, &m)) {
+            rows.entry(compound).or_default().push(row);
         }
     }
     let mut compounds: Vec<(CompoundId, Vec<&Measured>)> = rows.into_iter().collect();
@@ -156,6 +152,17 @@ fn find_measured(network: &Network, scheme: &Scheme) -> FxHashMap<CompoundId, Kn
         }
     }
     found
+}
+
+/// Numbers of carbons of the frames without fixed atoms: all that measured rows can be of.
+fn carbons_of_bare_frames(network: &Network) -> BTreeSet<usize> {
+    network
+        .frames()
+        .iter()
+        .map(|frame| &frame.prepared.frame)
+        .filter(|frame| frame.sites().len() == frame.skeleton().n_atoms())
+        .map(|frame| frame.sites().len())
+        .collect()
 }
 
 /// The compound a measured structure is at the network's depth of identity; none if the
