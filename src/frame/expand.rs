@@ -86,6 +86,12 @@ impl Prepared {
         Prepared { frame, layout, canonicaliser, limits, places }
     }
 
+    /// Whether the skeleton holds a small bridged system, some of whose configurations strain
+    /// forbids.
+    pub fn has_small_cage(&self) -> bool {
+        self.limits.has_small_cage()
+    }
+
     /// The canonical state of a decoration.
     pub fn canonical_row(&self, decoration: &Decoration) -> Vec<u64> {
         let n = self.layout.n_words();

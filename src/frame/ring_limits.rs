@@ -50,6 +50,11 @@ impl RingLimits {
         limits
     }
 
+    /// Whether some bond falls under Bredt's rule: the skeleton holds a small bridged system.
+    pub fn has_small_cage(&self) -> bool {
+        self.may_be_double.contains(&false)
+    }
+
     /// Whether a bond that was just raised may have the order it now has.
     pub fn allow(&self, decoration: &Decoration, raised: usize) -> bool {
         match decoration.orders[raised] {

@@ -21,6 +21,7 @@ pub fn header(network: &Network, rules: &[Rule], conditions: &thermo::Conditions
         isomer_warning(network),
         idle_warning(network, rules),
         cumulene_warning(network),
+        cage_warning(network),
         limit_warning(network, extent),
     ];
     Header {
@@ -69,6 +70,16 @@ fn cumulene_warning(network: &Network) -> Option<String> {
     let n = network.n_with_hidden_cumulene_isomers();
     let what = if n == 1 { "1 compound holds a cumulene".to_owned() } else { format!("{n} compounds hold a cumulene") };
     (n > 0).then(|| format!("{what} whose configuration is not told apart: each stands for two isomers or more"))
+}
+
+/// Says that isomers are listed that a small cage cannot have.
+fn cage_warning(network: &Network) -> Option<String> {
+    let is_full = network.identity() == molecule::Identity::Full;
+    let has_cage = network.frames().iter().any(|frame| frame.prepared.has_small_cage());
+    (is_full && has_cage).then(|| {
+        "the skeleton has small bridged rings: configurations at bridgeheads that strain forbids are not left out"
+            .to_owned()
+    })
 }
 
 /// Says that a limit was reached, if it was one of the user's or the program's and not part of

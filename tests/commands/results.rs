@@ -128,6 +128,12 @@ fn hidden_isomers_of_cumulenes_are_told() {
     assert!(stderr.contains("cumulene whose configuration is not told apart"), "{stderr}");
 }
 
+#[test]
+fn impossible_isomers_of_small_cages_are_told() {
+    let (_, stderr) = run(&["network", "ClC1CC2CCC1C2", "--identity", "full", "--format", "summary"], 0);
+    assert!(stderr.contains("configurations at bridgeheads that strain forbids"), "{stderr}");
+}
+
 /// The reader goes away after one byte; the program ends quietly.
 #[test]
 fn a_closed_pipe_ends_quietly() {
