@@ -181,3 +181,20 @@ fn benzene_is_measured_and_its_kin_are_estimated_closely() {
     let (_, sd) = explained("Brc1ccc(I)cc1");
     assert!(sd < 12.0, "an aryl halide that was never measured: +- {sd:.1} kJ/mol");
 }
+
+/// Where the energies of a parent's isomers come from at full identity.
+fn origins_at_full_identity(text: &str) -> Vec<&'static str> {
+    let parents = smiles::read(text).unwrap().isomers(Identity::Full, 64).unwrap();
+    let rules = RuleSet::shipped().select(&Selection::default()).unwrap();
+    let network = enumerate(&parents, &rules, Identity::Full, Limits::default(), 1).unwrap();
+    let found = energies(&network, shipped(), 1);
+    let ids = parents.iter().map(|parent| network.find(parent).unwrap());
+    ids.map(|id| Node::of(&network, &found, shipped(), id).origin().text()).collect()
+}
+
+#[test]
+fn mirror_images_share_a_measurement_and_diastereomers_do_not() {
+    assert_eq!(origins_at_full_identity("CC(Cl)CCl"), ["partly measured"; 2]);
+    // Meso and threo 2,3-dichlorobutane are two substances; the measured row names neither.
+    assert_eq!(origins_at_full_identity("CC(Cl)C(C)Cl"), ["estimated"; 3]);
+}
