@@ -1,18 +1,28 @@
 //! The fit and the potentials that come of it.
 
 use std::path::{Path, PathBuf};
+use std::sync::OnceLock;
 
-use haloshed::molecule::Identity;
+use haloshed::frame::{Canonicaliser, Frame, Layout};
+use haloshed::molecule::{Halogen, Identity};
 use haloshed::network::{Limits, enumerate};
 use haloshed::rules::{RuleSet, Selection};
 use haloshed::smiles;
-use haloshed::thermo::{Conditions, Refitted, Sources, energies, potential, refit, shipped};
+use haloshed::thermo::data::Quantity;
+use haloshed::thermo::estimate::{Estimator, sum, symmetry_entropy};
+use haloshed::thermo::features::FrameFacts;
+use haloshed::thermo::{Conditions, Node, Refitted, Sources, energies, potential, refit, shipped};
 
 fn data(file: &str) -> PathBuf {
     Path::new(env!("CARGO_MANIFEST_DIR")).join("data").join(file)
 }
 
-fn refitted() -> Refitted {
+fn refitted() -> &'static Refitted {
+    static FITTED: OnceLock<Refitted> = OnceLock::new();
+    FITTED.get_or_init(fit_anew)
+}
+
+fn fit_anew() -> Refitted {
     let read = |file: &str| std::fs::read_to_string(data(file)).unwrap();
     let (gas, henry, priors) = (read("gas.csv"), read("henry.csv"), read("priors.csv"));
     refit(Sources { gas: &gas, henry: &henry, priors: &priors }).unwrap()
@@ -90,4 +100,101 @@ fn elimination_of_perchloroethene_stands_below_its_hydrogenolysis() {
     let (hydrogenolysis, _) = e_volt("ClC(Cl)=C(Cl)Cl", "ClC=C(Cl)Cl");
     assert!(elimination < hydrogenolysis, "{elimination:.3} V against {hydrogenolysis:.3} V");
     assert!((elimination - 0.50).abs() < 2.0 * sd && sd < 0.05, "{elimination:.3} +- {sd:.3} V");
+}
+
+/// Standard entropy by the scheme alone, symmetry included, J/mol/K.
+fn estimated_entropy(text: &str) -> f64 {
+    let molecule = smiles::read(text).unwrap();
+    let frame = Frame::of(&molecule);
+    let facts = FrameFacts::of(&frame);
+    let state = frame.decompose(&molecule);
+    let layout = Layout::new(&frame, &Halogen::ALL, Identity::Geometric).unwrap();
+    let canonicaliser = Canonicaliser::new(&frame, &layout);
+    let (mut row, mut candidates) = (vec![0; layout.n_words()], vec![0; layout.n_words()]);
+    layout.pack(&state, &mut row);
+    layout.candidates(&frame, &state, &mut candidates);
+    let symmetry = symmetry_entropy(&frame, &state, &canonicaliser.stabiliser(&row, &candidates));
+    sum(shipped(), Quantity::Entropy, &Estimator::new(&frame, &facts, true).groups(&state)) - symmetry
+}
+
+/// Deviations of left-out measurements, as the report of the fit words them.
+fn left_out_median(report: &str, quantity: &str, class: &str) -> f64 {
+    let is_of = |line: &&str| line.starts_with(quantity) && line.contains(&format!("), {class}:"));
+    let line = report.lines().find(is_of).unwrap();
+    let (_, tail) = line.split_once("median ").unwrap();
+    tail.split(',').next().unwrap().parse().unwrap()
+}
+
+#[test]
+fn unseen_compounds_are_foretold_as_well_as_before() {
+    // What the scheme foretells of compounds it has not seen; a change of groups or data that
+    // makes it worse must be noticed. kJ/mol, J/mol/K and decades.
+    for (quantity, class, most) in [
+        ("Enthalpy", "no halogen", 3.0),
+        ("Enthalpy", "chlorine only", 3.5),
+        ("Enthalpy", "bromine only", 3.0),
+        ("Enthalpy", "fluorine only", 10.0),
+        ("Entropy", "no halogen", 3.0),
+        ("Entropy", "chlorine only", 2.0),
+        ("Solubility", "no halogen", 0.12),
+        ("Solubility", "chlorine only", 0.15),
+    ] {
+        let median = left_out_median(&refitted().report, quantity, class);
+        assert!(median < most, "{quantity} of compounds with {class}: {median} left out, expected below {most}");
+    }
+}
+
+#[test]
+fn no_measured_entropy_stands_far_off_the_scheme() {
+    // What a wrong row does to a potential: 30 J/mol/K are 46 mV of a two-electron step. Rows
+    // that prove wrong are set aside in data/gas.csv with the reason; strained and crowded
+    // compounds may stand off in enthalpy, entropies do not.
+    let mut far = Vec::new();
+    for row in &shipped().measured {
+        let Some(measured) = row.values[Quantity::Entropy as usize] else { continue };
+        let excess = measured.mean - estimated_entropy(&row.smiles);
+        if excess.abs() > 30.0 {
+            far.push(format!("{} {excess:.0}", row.smiles));
+        }
+    }
+    assert!(far.is_empty(), "{far:?}");
+}
+
+#[test]
+fn benzene_is_measured_and_its_kin_are_estimated_closely() {
+    // Gibbs energies in water, kJ/mol: Shock and Helgeson, Geochim. Cosmochim. Acta 54, 915
+    // (1990): benzene 133.9 (from memory). Cyclohexane networks end here.
+    let explained = |text: &str| {
+        let network = enumerate(
+            &[smiles::read(text).unwrap()],
+            &RuleSet::shipped().select(&Selection::default()).unwrap(),
+            Identity::Geometric,
+            Limits::default(),
+            1,
+        )
+        .unwrap();
+        let found = energies(&network, shipped(), 1);
+        (found.gibbs_kj_per_mol(0).unwrap(), Node::of(&network, &found, shipped(), 0).sd_kj_per_mol(shipped()))
+    };
+    let (gibbs, sd) = explained("c1ccccc1");
+    assert!((gibbs - 133.9).abs() < 2.0 && sd < 1.0, "{gibbs:.1} +- {sd:.1} kJ/mol");
+    let (_, sd) = explained("Brc1ccc(I)cc1");
+    assert!(sd < 12.0, "an aryl halide that was never measured: +- {sd:.1} kJ/mol");
+}
+
+/// Where the energies of a parent's isomers come from at full identity.
+fn origins_at_full_identity(text: &str) -> Vec<&'static str> {
+    let parents = smiles::read(text).unwrap().isomers(Identity::Full, 64).unwrap();
+    let rules = RuleSet::shipped().select(&Selection::default()).unwrap();
+    let network = enumerate(&parents, &rules, Identity::Full, Limits::default(), 1).unwrap();
+    let found = energies(&network, shipped(), 1);
+    let ids = parents.iter().map(|parent| network.find(parent).unwrap());
+    ids.map(|id| Node::of(&network, &found, shipped(), id).origin().text()).collect()
+}
+
+#[test]
+fn mirror_images_share_a_measurement_and_diastereomers_do_not() {
+    assert_eq!(origins_at_full_identity("CC(Cl)CCl"), ["partly measured"; 2]);
+    // Meso and threo 2,3-dichlorobutane are two substances; the measured row names neither.
+    assert_eq!(origins_at_full_identity("CC(Cl)C(C)Cl"), ["estimated"; 3]);
 }

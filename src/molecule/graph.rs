@@ -314,6 +314,16 @@ impl Molecule {
         }
     }
 
+    /// The molecule with every given handedness reversed.
+    #[must_use]
+    pub fn mirror_image(&self) -> Molecule {
+        let mut image = self.clone();
+        for handedness in image.handedness.iter_mut().flatten() {
+            *handedness = handedness.reversed();
+        }
+        image
+    }
+
     /// Forgets every tetrahedral configuration.
     pub fn clear_handedness(&mut self) {
         self.handedness.fill(None);

@@ -7,6 +7,8 @@ use std::collections::BTreeMap;
 
 use serde::Deserialize;
 
+use crate::molecule::Element;
+
 /// A quantity that is measured and fitted.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Deserialize)]
 #[serde(rename_all = "lowercase")]
@@ -67,6 +69,13 @@ pub struct Species {
     pub sd_kj_per_mol: f64,
     /// Where it stands.
     pub source: String,
+}
+
+impl Species {
+    /// Whether it is a compound a network can hold, and not an ion or water.
+    pub fn is_compound(&self) -> bool {
+        self.species != "water" && Element::from_symbol(&self.species).is_none_or(|element| element.halogen().is_none())
+    }
 }
 
 /// A value with its standard uncertainty.

@@ -3,21 +3,22 @@
 //! A compound's energy is its estimate, replaced part by part (enthalpy, entropy, solubility)
 //! by what was measured. Where the scheme has no value for a part of the compound the number is
 //! meaningful only against compounds with the same signature: see [`parts`](super::parts).
-//! Uncertainties are made when asked for, by [`nodes`](super::nodes).
+//! Which compounds were measured is found by [`matching`](super::matching); uncertainties are made
+//! when asked for, by [`nodes`](super::nodes).
 
 use rayon::prelude::*;
 use rustc_hash::FxHashMap;
 
 use super::constants::{RT_LN_10_KJ_PER_MOL, STANDARD_TEMPERATURE_KELVIN};
-use super::data::{Quantity, Value, combine};
+use super::data::Quantity;
 use super::estimate::{Estimator, element_entropy, symmetry_entropy};
 use super::features::FrameFacts;
+use super::matching::{Known, find_measured};
 use super::parts::signature;
-use super::scheme::{Measured, Scheme};
+use super::scheme::Scheme;
 use crate::frame::{Decoration, Prepared};
-use crate::molecule::{Element, Identity, Molecule};
+use crate::molecule::Identity;
 use crate::network::{CompoundId, Network};
-use crate::smiles;
 
 /// Compounds that one thread takes at a time.
 const BLOCK: usize = 4096;
@@ -34,17 +35,6 @@ pub struct Energies {
     facts: Vec<FrameFacts>,
     /// What was measured, by compound.
     measured: FxHashMap<CompoundId, Known>,
-}
-
-/// What is known of a compound by measurement.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Known {
-    /// Combined values by [`Quantity`].
-    pub values: [Option<Value>; 3],
-    /// Sources by quantity.
-    pub sources: [String; 3],
-    /// A Gibbs energy in water measured as such, kJ/mol, with its source.
-    pub aqueous: Option<(Value, String)>,
 }
 
 /// Factors that turn enthalpy, entropy and log10 of solubility into Gibbs energy in water.
@@ -123,61 +113,6 @@ fn unshared_energy(prepared: &Prepared, state: &Decoration, row: &[u64], candida
     let stabiliser = prepared.canonicaliser.stabiliser(row, candidates);
     let symmetry = symmetry_entropy(&prepared.frame, state, &stabiliser);
     FACTORS[1] * (-symmetry - element_entropy(&prepared.frame, state))
-}
-
-/// Measured compounds that are in a network.
-fn find_measured(network: &Network, scheme: &Scheme) -> FxHashMap<CompoundId, Known> {
-    let mut rows: FxHashMap<CompoundId, Vec<&Measured>> = FxHashMap::default();
-    let mut found: FxHashMap<CompoundId, Known> = FxHashMap::default();
-    for frame in network.frames() {
-        let n_carbons = frame.prepared.frame.skeleton().atoms().filter(|a| a.element == Element::C).count();
-        let is_bare = frame.prepared.frame.sites().len() == frame.prepared.frame.skeleton().n_atoms();
-        for row in scheme.measured.iter().filter(|row| is_bare && row.n_carbons == n_carbons) {
-            if let Some(compound) = smiles::read(&row.smiles).ok().and_then(|m| find_one(network, &m)) {
-                let known = rows.entry(compound).or_default();
-                if !known.iter().any(|k| k.smiles == row.smiles) {
-                    known.push(row);
-                }
-            }
-        }
-    }
-    let mut compounds: Vec<(CompoundId, Vec<&Measured>)> = rows.into_iter().collect();
-    compounds.sort_by_key(|&(compound, _)| compound);
-    for (compound, rows) in compounds {
-        found.insert(compound, Known::of(&rows));
-    }
-    for species in &scheme.species {
-        let molecule =
-            smiles::read(&species.species).ok().filter(|_| species.species.len() > 2 || species.species == "CO");
-        if let Some(compound) = molecule.and_then(|m| find_one(network, &m)) {
-            let value = Value { mean: species.gibbs_kj_per_mol, sd: species.sd_kj_per_mol };
-            let aqueous = Some((value, species.source.clone()));
-            found.insert(compound, Known { values: [None; 3], sources: Default::default(), aqueous });
-        }
-    }
-    found
-}
-
-/// The compound a measured structure is at the network's depth of identity; none if the
-/// structure leaves open what the network tells apart.
-fn find_one(network: &Network, molecule: &Molecule) -> Option<CompoundId> {
-    let mut plain = molecule.clone();
-    plain.keep_real_units(network.identity());
-    let isomers = plain.isomers(network.identity(), 64).ok()?;
-    if isomers.len() == 1 { network.find(&isomers[0]) } else { None }
-}
-
-impl Known {
-    /// Several measured isomers that the network takes for one compound are combined.
-    fn of(rows: &[&Measured]) -> Known {
-        let values = [0, 1, 2].map(|q| combine(&rows.iter().filter_map(|row| row.values[q]).collect::<Vec<_>>()));
-        let sources = [0, 1, 2].map(|q| {
-            let mut all: Vec<&str> = rows.iter().map(|r| r.sources[q].as_str()).filter(|s| !s.is_empty()).collect();
-            all.dedup();
-            all.join("; ")
-        });
-        Known { values, sources, aqueous: None }
-    }
 }
 
 impl Energies {

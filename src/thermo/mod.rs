@@ -2,8 +2,8 @@
 //!
 //! Read [`data`] (rows and combined values), [`features`] (the groups), [`symmetry`],
 //! [`estimate`] (groups of a compound), [`fit`](mod@fit) and [`refit`](mod@refit) (rows to group
-//! values), [`scheme`] (the tables as fitted); then [`energies`](mod@energies) (a whole network),
-//! [`nodes`] (one compound, taken apart), [`parts`] (what has no value), [`conditions`] and
+//! values), [`scheme`] (the tables as fitted); then [`matching`] (which compounds were measured),
+//! [`energies`](mod@energies) (a whole network), [`nodes`] (one compound, taken apart), [`parts`] (what has no value), [`conditions`] and
 //! [`potential`](mod@potential).
 
 pub mod conditions;
@@ -13,6 +13,7 @@ pub mod energies;
 pub mod estimate;
 pub mod features;
 pub mod fit;
+pub mod matching;
 pub mod nodes;
 pub mod parts;
 pub mod potential;

@@ -1,9 +1,10 @@
 //! One compound's energy with all that stands behind it: parts, origin, uncertainty.
 
 use super::data::{Quantity, Value};
-use super::energies::{Energies, FACTORS, Known};
+use super::energies::{Energies, FACTORS};
 use super::estimate::{Estimator, element_entropy, sum, symmetry_entropy};
 use super::fit::Class;
+use super::matching::Known;
 use super::parts::halogens_beside_fixed;
 use super::scheme::Scheme;
 use crate::molecule::{Halogen, Identity};

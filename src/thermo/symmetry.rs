@@ -105,3 +105,62 @@ fn at_double_bond(frame: &Frame, state: &Decoration, a: usize, b: usize, g: &[us
         }
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::frame::{Canonicaliser, Layout};
+    use crate::molecule::{Halogen, Identity};
+    use crate::smiles;
+
+    fn check(text: &str, expected: f64) {
+        let frame = Frame::of(&smiles::read(text).unwrap());
+        let state = frame.decompose(&smiles::read(text).unwrap());
+        let layout = Layout::new(&frame, &Halogen::ALL, Identity::Geometric).unwrap();
+        let canonicaliser = Canonicaliser::new(&frame, &layout);
+        let (mut row, mut candidates) = (vec![0; layout.n_words()], vec![0; layout.n_words()]);
+        layout.pack(&state, &mut row);
+        layout.candidates(&frame, &state, &mut candidates);
+        let found = symmetry_number(&frame, &state, &canonicaliser.stabiliser(&row, &candidates));
+        assert!((found - expected).abs() < 1e-9, "{text}: {found}, expected {expected}");
+    }
+
+    #[test]
+    fn rigid_molecules_have_the_order_of_their_rotation_group() {
+        // Point groups as in any textbook of group theory: T, C3v, D2h, C2v, D2h, D2d, D6h, D3h, Dinf h.
+        check("C", 12.0);
+        check("ClC(Cl)(Cl)Cl", 12.0);
+        check("ClC(Cl)Cl", 3.0);
+        check("ClCCl", 2.0);
+        check("FC(Cl)Br", 1.0);
+        check("C=C", 4.0);
+        check("ClC=C", 1.0);
+        check("C=C(Cl)Cl", 2.0);
+        check(r"Cl/C=C\Cl", 2.0);
+        check("Cl/C=C/Cl", 2.0);
+        check("ClC(Cl)=C(Cl)Cl", 4.0);
+        check("C=C=C", 4.0);
+        check("C#C", 2.0);
+        check("ClC#C", 1.0);
+        check("c1ccccc1", 12.0);
+        check("Clc1ccc(Cl)cc1", 4.0);
+        check("Clc1cc(Cl)cc(Cl)c1", 6.0);
+        check("C1CC1", 6.0);
+        check("Cl[C]Cl", 2.0);
+    }
+
+    #[test]
+    fn internal_rotors_multiply_the_outer_symmetry() {
+        // S. W. Benson, Thermochemical Kinetics (1976), section 2.6: outer times 3 a methyl.
+        check("CC", 18.0);
+        check("CCC", 18.0);
+        check("CC(C)C", 81.0);
+        check("CC(C)(C)C", 972.0);
+        check("ClC(Cl)(Cl)C(Cl)(Cl)Cl", 18.0);
+        check("CC(Cl)(Cl)Cl", 9.0);
+        check("ClCCCl", 2.0);
+        check("C/C=C/C", 18.0);
+        check("CC=C", 3.0);
+        check("Cc1ccccc1", 6.0);
+    }
+}
