@@ -20,6 +20,15 @@ pub fn shaped(text: &str) -> Option<String> {
     is_shaped.then_some(plain)
 }
 
+/// Whether a text can only be meant as a CAS number: digits and hyphens, at least five digits.
+pub fn is_meant(text: &str) -> bool {
+    let is_number = text.chars().all(|c| c.is_ascii_digit() || plain_hyphen(c) == '-' || c == ' ');
+    is_number && text.bytes().filter(u8::is_ascii_digit).count() >= LEAST_DIGITS
+}
+
+/// Digits of the shortest CAS number.
+const LEAST_DIGITS: usize = 5;
+
 fn plain_hyphen(c: char) -> char {
     match c {
         '\u{2010}' | '\u{2011}' | '\u{2012}' | '–' | '—' | '\u{2212}' => '-',
@@ -48,6 +57,16 @@ mod tests {
         }
         for text in ["1,1-dichloroethane", "127-184", "127-18-44", "1-18-4", "ClCCl", "", "12a-18-4", "CFC-11-4"] {
             assert_eq!(shaped(text), None, "{text}");
+        }
+    }
+
+    #[test]
+    fn a_number_of_another_shape_is_still_meant_as_one() {
+        for text in ["79-01-60", "79016", "79016-0", "79 01 6", "79–01–60", "79-016"] {
+            assert!(is_meant(text) && shaped(text).is_none(), "{text}");
+        }
+        for text in ["", "1-1", "1,1,2,2-1", "C1-2-3-4-5", "11223a"] {
+            assert!(!is_meant(text), "{text}");
         }
     }
 

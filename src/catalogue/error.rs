@@ -25,6 +25,12 @@ pub enum LookupError {
         /// At most three known texts that are close, the closest first.
         nearest: Vec<&'static str>,
     },
+    /// Digits and hyphens that are no CAS number.
+    #[error("`{text}` is not a CAS number")]
+    CasShape {
+        /// As given.
+        text: String,
+    },
     /// A CAS number contradicts itself.
     #[error("the CAS number {cas} has the check digit {found}, but its other digits call for {expected}")]
     CheckDigit {
@@ -57,6 +63,9 @@ impl LookupError {
             LookupError::Unknown { nearest, .. } => {
                 let quoted = nearest.iter().map(|text| format!("`{text}`"));
                 format!("did you mean {}? any other compound can be given as a SMILES", one_of(quoted))
+            }
+            LookupError::CasShape { .. } => {
+                "a CAS number has two to seven digits, two digits and one, with hyphens between: 79-01-6".to_owned()
             }
             LookupError::CheckDigit { .. } => "look for two digits that changed places".to_owned(),
             LookupError::UnknownCas { .. } => "give the compound as a SMILES".to_owned(),

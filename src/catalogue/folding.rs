@@ -3,7 +3,8 @@
 //! A key is lower case without spaces, hyphens, commas, brackets and primes; Greek letters are
 //! spelt out; `ethylene`, `propylene` and `acetylene` become `ethene`, `propene` and `ethyne`;
 //! `1-propene` and `prop-1-ene` become `propene`, whose double bond can be nowhere else;
-//! `2-butene` becomes `but-2-ene`. So `1,1-Dichloro ethylene` and `1,1-dichloroethene` are one.
+//! `2-butene` becomes `but-2-ene`; `trichlorethylene` gets the `o` that older texts leave out.
+//! So `1,1-Dichlor ethylene` and `1,1-dichloroethene` are one.
 //!
 //! Invariant: folding a key changes nothing, and no two rows of the catalogue share a key.
 
@@ -22,6 +23,12 @@ const EXCHANGED: [(&str, &str); 8] = [
     ("2butene", "but2ene"),
 ];
 
+/// Halogen stems that older texts write without an `o` before a parent.
+const SHORT_STEMS: [&str; 3] = ["chlor", "brom", "fluor"];
+
+/// Parents before which they do so.
+const PARENTS: [&str; 6] = ["meth", "eth", "prop", "but", "benz", "acet"];
+
 /// The key of a name.
 pub fn fold(text: &str) -> String {
     let mut key = String::with_capacity(text.len());
@@ -31,6 +38,7 @@ pub fn fold(text: &str) -> String {
             None => key.push(c),
         }
     }
+    let mut key = with_full_stems(key);
     if !key.contains("ene") {
         return key;
     }
@@ -40,6 +48,16 @@ pub fn fold(text: &str) -> String {
         }
     }
     without_propene_locant(key)
+}
+
+/// `trichlorethene` as `trichloroethene`.
+fn with_full_stems(mut key: String) -> String {
+    for stem in SHORT_STEMS.into_iter().filter(|stem| key.contains(stem)).collect::<Vec<_>>() {
+        for parent in PARENTS {
+            key = key.replace(&format!("{stem}{parent}"), &format!("{stem}o{parent}"));
+        }
+    }
+    key
 }
 
 /// Characters that tell no two names apart.
@@ -75,6 +93,15 @@ mod tests {
     fn ethylene_is_ethene() {
         check(&["1,1-dichloroethene", "1,1-Dichloro ethylene", " 1.1 - dichloroethylene"], "11dichloroethene");
         check(&["Acetylene", "ethyne"], "ethyne");
+    }
+
+    #[test]
+    fn a_stem_without_its_o_is_read() {
+        check(&["Trichlorethylen", "trichlorethylen"], "trichloroethylen");
+        check(&["trichlorethylene", "trichloroethene"], "trichloroethene");
+        check(&["Dichlormethane"], "dichloromethane");
+        check(&["chloracetic acid", "chloroacetic acid"], "chloroaceticacid");
+        check(&["methoxychlor"], "methoxychlor");
     }
 
     #[test]

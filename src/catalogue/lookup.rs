@@ -27,12 +27,14 @@ struct Meaning {
 
 /// The compound that a name, an abbreviation or a CAS number means.
 ///
-/// Case, spaces, hyphens and primes don't matter (see [`folding`](super::folding)).
+/// Case, spaces, hyphens and primes don't matter (see [`folding`](super::folding)); a name may be
+/// inverted as in lists by parent, `Ethene, tetrachloro-`.
 ///
 /// # Errors
 /// * the text is empty: `Empty`
 /// * it is used for several compounds: `Ambiguous`, with them
-/// * it looks like a CAS number with a wrong check digit: `CheckDigit`; with the right one, but
+/// * it is digits and hyphens, but no CAS number: `CasShape`
+/// * it is a CAS number with a wrong check digit: `CheckDigit`; with the right one, but
 ///   not in the table: `UnknownCas`
 /// * it is not in the table: `Unknown`, with near texts
 ///
@@ -50,16 +52,26 @@ pub fn find(text: &str) -> Result<&'static Entry, LookupError> {
     if let Some(number) = cas::shaped(text) {
         return by_cas(number);
     }
-    let key = fold(text);
+    let given = || text.trim().to_owned();
+    if cas::is_meant(text) {
+        return Err(LookupError::CasShape { text: given() });
+    }
+    let key = upright(text).map_or_else(|| fold(text), |upright| fold(&upright));
     if key.is_empty() {
         return Err(LookupError::Empty);
     }
-    let given = || text.trim().to_owned();
     match meanings().get(&key).map(|meaning| meaning.choices.as_slice()) {
         Some([entry]) => Ok(entry),
         Some(choices) => Err(LookupError::Ambiguous { text: given(), choices: choices.to_vec() }),
         None => Err(LookupError::Unknown { text: given(), nearest: nearest(&key) }),
     }
+}
+
+/// `Ethene, 1,2-dichloro-, (E)-` as `(E)-1,2-dichloro-Ethene`; none if the text is not inverted.
+fn upright(text: &str) -> Option<String> {
+    let parts: Vec<&str> = text.trim().split(", ").collect();
+    let is_inverted = parts.len() > 1 && parts[1..].iter().all(|part| part.ends_with('-'));
+    is_inverted.then(|| parts.into_iter().rev().collect())
 }
 
 /// The row with this canonical SMILES.

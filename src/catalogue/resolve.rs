@@ -40,11 +40,9 @@ impl Resolved {
         let (Reading::Cas(entry) | Reading::Name(entry)) = self.reading else { return None };
         let other = self.other_reading.as_deref()?;
         let other_name = by_smiles(other).map_or(other, |entry| entry.name.as_str());
-        Some(format!(
-            "`{}` is taken as {}; as a SMILES it would be {other_name}, which is read when a bond is written, as in C-C",
-            text.trim(),
-            entry.name
-        ))
+        let text = text.trim();
+        let way = drawn(text, other).map(|drawn| format!("; write {drawn} for {other_name}")).unwrap_or_default();
+        Some(format!("`{text}` is taken as {}, not as the SMILES of {other_name}{way}", entry.name))
     }
 }
 
@@ -84,6 +82,13 @@ pub fn resolve(text: &str) -> Result<Resolved, ResolveError> {
         (Some(Err(error)), _) => Err(error.into()),
         (None, Err(error)) => Err(error.into()),
     }
+}
+
+/// The text with a bond written in it, so that it can only be a SMILES: `CF` as `C-F`.
+fn drawn(text: &str, canonical: &str) -> Option<String> {
+    let places = text.char_indices().skip(1).map(|(at, _)| at);
+    let mut candidates = places.map(|at| format!("{}-{}", &text[..at], &text[at..]));
+    candidates.find(|candidate| smiles::read(candidate).is_ok_and(|read| smiles::write(&read) == canonical))
 }
 
 /// Characters that a SMILES has between its atoms; a name has few of them.
