@@ -12,11 +12,6 @@ use rustc_hash::FxHasher;
 use crate::frame::{Decoration, Frame};
 use crate::molecule::Element;
 
-/// Standard uncertainty of moving a halogen to or from a carbon beside a fixed atom, kJ/mol:
-/// the scheme takes the fixed atom for a carbon there. Common practice, no source: anomeric
-/// and inductive effects of this size are usual.
-pub const BESIDE_FIXED_SD_KJ_PER_MOL: f64 = 6.0;
-
 /// The signature of a decoration's valueless parts; zero if there are none.
 pub fn signature(frame: &Frame, state: &Decoration) -> u64 {
     if frame.sites().len() == frame.skeleton().n_atoms() {

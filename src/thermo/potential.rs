@@ -9,14 +9,10 @@ use super::constants::{FARADAY_C_PER_MOL, RT_LN_10_KJ_PER_MOL};
 use super::data::Quantity;
 use super::energies::{Energies, FACTORS};
 use super::nodes::{Node, Origin};
-use super::parts::{BESIDE_FIXED_SD_KJ_PER_MOL, in_words};
+use super::parts::in_words;
 use super::scheme::Scheme;
 use crate::molecule::Halogen;
 use crate::network::{CompoundId, HalfReaction, Network};
-
-/// Share of a compound's own deviation from the scheme that its neighbour in a step has too.
-/// Common practice, no source: neighbours differ in one or two groups of many.
-const SHARED_DEVIATION: f64 = 0.5;
 
 /// Energy and potential of a step.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -164,18 +160,19 @@ fn variance(scheme: &Scheme, from: &Node, to: &Node, n_reactants: f64) -> f64 {
                 return to.variance(scheme, q) + n_reactants * n_reactants * from.variance(scheme, q);
             }
             let m = (from.model_sd[q as usize], to.model_sd[q as usize]);
-            let own = (1.0 - SHARED_DEVIATION) * (m.0 * m.0 * n_reactants * n_reactants + m.1 * m.1);
+            let own = (1.0 - scheme.allowances.shared_deviation) * (m.0 * m.0 * n_reactants * n_reactants + m.1 * m.1);
             let shared = scheme.variance(q, &difference(&to.groups, &from.groups, n_reactants));
             FACTORS[q as usize] * FACTORS[q as usize] * (shared + own)
         })
         .sum();
-    quantities + beside_fixed(from, to)
+    quantities + beside_fixed(scheme, from, to)
 }
 
 /// Variance of halogens that come or go beside fixed atoms.
-fn beside_fixed(from: &Node, to: &Node) -> f64 {
+fn beside_fixed(scheme: &Scheme, from: &Node, to: &Node) -> f64 {
     let n: u32 = from.beside_fixed.iter().zip(&to.beside_fixed).map(|(a, b)| u32::from(a.abs_diff(*b))).sum();
-    f64::from(n) * BESIDE_FIXED_SD_KJ_PER_MOL * BESIDE_FIXED_SD_KJ_PER_MOL
+    let sd = scheme.allowances.halogen_beside_fixed_sd_kj_per_mol;
+    f64::from(n) * sd * sd
 }
 
 /// Groups of `a` less `n` times those of `b`; both sorted by number.

@@ -19,7 +19,18 @@ pub struct Scheme {
     pub measured: Vec<Measured>,
     /// Ions, water and small molecules.
     pub species: Vec<Species>,
+    /// What is granted where nothing is fitted.
+    pub allowances: Allowances,
     covariance: [OnceLock<Vec<f32>>; 3],
+}
+
+/// Uncertainties that no fit gives, from `data/allowances.csv`; the reasons stand there.
+#[derive(Debug, Clone, Copy)]
+pub struct Allowances {
+    /// Standard uncertainty of each halogen that comes or goes beside a fixed atom, kJ/mol.
+    pub halogen_beside_fixed_sd_kj_per_mol: f64,
+    /// Share of the variance of a compound's own deviation that its neighbour in a step has too.
+    pub shared_deviation: f64,
 }
 
 /// What was measured of one compound.
@@ -38,6 +49,7 @@ pub struct Measured {
 const GROUPS: &str = include_str!("../../data/fitted/groups.csv");
 const MODEL_ERROR: &str = include_str!("../../data/fitted/model_error.csv");
 const MEASURED: &str = include_str!("../../data/fitted/measured.csv");
+const ALLOWANCES: &str = include_str!("../../data/allowances.csv");
 const SPECIES: &str = include_str!("../../data/species.csv");
 const COVARIANCE: [&str; 3] = [
     include_str!("../../data/fitted/covariance_enthalpy.csv"),
@@ -71,7 +83,21 @@ fn load() -> Result<Scheme, csv::Error> {
         csv::Reader::from_reader(MEASURED.as_bytes()).into_deserialize().collect();
     let measured = measured?.into_iter().map(Measured::from).collect();
     let covariance = [OnceLock::new(), OnceLock::new(), OnceLock::new()];
-    Ok(Scheme { values, model_sd, measured, species: species(SPECIES)?, covariance })
+    Ok(Scheme { values, model_sd, measured, species: species(SPECIES)?, allowances: allowances()?, covariance })
+}
+
+/// A name that is missing leaves its widest allowance.
+fn allowances() -> Result<Allowances, csv::Error> {
+    let mut found = Allowances { halogen_beside_fixed_sd_kj_per_mol: f64::INFINITY, shared_deviation: 0.0 };
+    for record in csv::Reader::from_reader(ALLOWANCES.as_bytes()).into_deserialize() {
+        let (name, value, _, _): (String, f64, String, String) = record?;
+        match name.as_str() {
+            "halogen beside a fixed atom" => found.halogen_beside_fixed_sd_kj_per_mol = value,
+            "shared deviation" => found.shared_deviation = value,
+            _ => {}
+        }
+    }
+    Ok(found)
 }
 
 /// A cell that holds a plain number.
@@ -141,4 +167,16 @@ fn triangle(text: &str) -> Vec<f32> {
         text.lines().flat_map(|line| line.split(',')).filter_map(|cell| cell.parse().ok()).collect();
     all.resize(N_FEATURES * (N_FEATURES + 1) / 2, 0.0);
     all
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn every_allowance_is_given() {
+        let found = shipped().allowances;
+        assert!(found.halogen_beside_fixed_sd_kj_per_mol.is_finite() && found.shared_deviation > 0.0);
+        assert!(found.shared_deviation < 1.0);
+    }
 }
